@@ -10,17 +10,23 @@ export type TestDb = {
   close: () => Promise<void>;
 };
 
-function urlOf(role: 'ADMIN' | 'OWNER' | 'APP', database: string): string {
-  const base = process.env[`TEST_PG_${role}_URL`];
-  if (!base)
-    throw new Error(`TEST_PG_${role}_URL is missing: this test belongs to a jest project without a database`);
+/** Where the cluster of globalSetup.mjs is, by role. */
+const clusterUrls = () => ({
+  admin: process.env.TEST_PG_ADMIN_URL,
+  owner: process.env.TEST_PG_OWNER_URL,
+  app: process.env.TEST_PG_APP_URL,
+});
+
+function urlOf(role: 'admin' | 'owner' | 'app', database: string): string {
+  const base = clusterUrls()[role];
+  if (!base) throw new Error('No PostgreSQL here: this test belongs to a jest project that starts none');
   const url = new URL(base);
   url.pathname = `/${database}`;
   return url.href;
 }
 
 async function asAdmin(sql: string[]): Promise<void> {
-  const admin = new pg.Client({ connectionString: urlOf('ADMIN', 'postgres') });
+  const admin = new pg.Client({ connectionString: urlOf('admin', 'postgres') });
   await admin.connect();
   try {
     for (const statement of sql) await admin.query(statement);
@@ -39,9 +45,9 @@ export async function testDb(): Promise<TestDb> {
   ]);
   return {
     name,
-    appUrl: urlOf('APP', name),
-    ownerUrl: urlOf('OWNER', name),
-    adminUrl: urlOf('ADMIN', name),
+    appUrl: urlOf('app', name),
+    ownerUrl: urlOf('owner', name),
+    adminUrl: urlOf('admin', name),
     close: () => asAdmin([`drop database if exists ${name} with (force)`]),
   };
 }
