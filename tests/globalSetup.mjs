@@ -16,12 +16,11 @@ export default async function globalSetup() {
   const wanted = fs.mkdtempSync(path.join(os.tmpdir(), 'inchwater-test-'));
   const password = () => randomBytes(12).toString('hex');
   const passwords = { adminPassword: password(), ownerPassword: password(), appPassword: password() };
-  const cluster = await startCluster(wanted, passwords, fast);
+  const cluster = await startCluster(wanted, passwords, { settings: fast, disposable: true });
   const discard = () => {
     if (!globalThis.testCluster) return;
     globalThis.testCluster = undefined;
     cluster.stop();
-    for (const dir of [cluster.dir, wanted]) fs.rmSync(dir, { recursive: true, force: true });
   };
   globalThis.testCluster = { discard };
   // jest skips globalTeardown when it is interrupted or when globalSetup fails
