@@ -1,11 +1,13 @@
 const http = require('node:http');
+const path = require('node:path');
 const { getDefaultConfig } = require('expo/metro-config');
 
 const config = getDefaultConfig(__dirname);
 // expo-sqlite on the web imports wa-sqlite.wasm as an asset
 if (!config.resolver.assetExts.includes('wasm')) config.resolver.assetExts.push('wasm');
 // nothing in these belongs to the app; watching the cluster's files would only keep Metro busy
-config.resolver.blockList = [/[/\\](\.data|artifacts|dist|\.git)[/\\].*/];
+const ours = ['.data', 'artifacts', 'dist', '.git'].map((name) => path.join(__dirname, name) + path.sep);
+config.resolver.blockList = ours.map((folder) => new RegExp(`^${folder.replace(/[^\w/]/g, '\\$&')}`));
 
 /** Passes a request on as if the browser had asked the server itself, so that cookies and origin checks hold. */
 function passOn(target, req, res) {
