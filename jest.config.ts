@@ -14,7 +14,13 @@ const inNode = {
   testEnvironment: 'node',
   moduleNameMapper,
   transform: {
-    '\\.[cm]?[jt]sx?$': ['babel-jest', { caller: { name: 'jest', platform: 'node', isServer: true } }],
+    '\\.[cm]?[jt]sx?$': [
+      'babel-jest',
+      {
+        caller: { name: 'jest', platform: 'node', isServer: true },
+        plugins: ['babel-plugin-transform-import-meta'], // jest 29 runs everything as CommonJS
+      },
+    ],
   },
   transformIgnorePatterns: [`node_modules/(?!(${esm})/)`],
 } satisfies Config;

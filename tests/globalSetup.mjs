@@ -6,35 +6,34 @@ import os from 'node:os';
 import path from 'node:path';
 import { databaseSql, startCluster } from '../server/bin/cluster.mjs';
 import { writeGenerated } from '../server/bin/generated.mjs';
+import { root } from '../server/bin/paths.mjs';
 
 const fast = { fsync: 'off', synchronous_commit: 'off', full_page_writes: 'off', shared_buffers: '64MB' };
+const template = 'template_inchwater';
 
 /** Starts the cluster, migrates the database that every test database is a copy of, and says where it is. */
 export default async function globalSetup() {
+  if (globalThis.discardTestCluster) return; // another project of this run has been here
   writeGenerated();
-  if (globalThis.testCluster) return; // another project of this run has been here
-  const wanted = fs.mkdtempSync(path.join(os.tmpdir(), 'inchwater-test-'));
+  const folder = fs.mkdtempSync(path.join(os.tmpdir(), 'inchwater-test-'));
+  let cluster;
+  globalThis.discardTestCluster = () => {
+    cluster?.stop();
+    cluster = undefined;
+    fs.rmSync(folder, { recursive: true, force: true });
+  };
+  // jest skips globalTeardown when it is interrupted or when globalSetup fails
+  process.on('exit', globalThis.discardTestCluster);
+  const interrupts = { SIGINT: 130, SIGTERM: 143, SIGHUP: 129 };
+  for (const [signal, code] of Object.entries(interrupts)) process.on(signal, () => process.exit(code));
+
   const password = () => randomBytes(12).toString('hex');
   const passwords = { adminPassword: password(), ownerPassword: password(), appPassword: password() };
-  const cluster = await startCluster(wanted, passwords, { settings: fast, disposable: true });
-  const discard = () => {
-    if (!globalThis.testCluster) return;
-    globalThis.testCluster = undefined;
-    cluster.stop();
-  };
-  globalThis.testCluster = { discard };
-  // jest skips globalTeardown when it is interrupted or when globalSetup fails
-  process.on('exit', discard);
-  for (const [signal, code] of [
-    ['SIGINT', 130],
-    ['SIGTERM', 143],
-  ])
-    process.on(signal, () => process.exit(code));
-
-  cluster.psql(databaseSql('template_inchwater'));
+  cluster = await startCluster(folder, passwords, { settings: fast, disposable: true });
+  cluster.psql(databaseSql(template));
   execFileSync(process.execPath, ['--import', 'tsx', 'server/bin/migrate.ts'], {
-    cwd: path.resolve(path.dirname(new URL(import.meta.url).pathname), '..'),
-    env: { ...process.env, OWNER_DATABASE_URL: cluster.urlFor('owner', 'template_inchwater') },
+    cwd: root,
+    env: { ...process.env, OWNER_DATABASE_URL: cluster.urlFor('owner', template) },
     stdio: ['ignore', 'ignore', 'inherit'],
   });
   process.env.TEST_PG_ADMIN_URL = cluster.urlFor('admin', 'postgres');

@@ -1,4 +1,4 @@
 /** Stops and removes the cluster of globalSetup.mjs. */
 export default async function globalTeardown() {
-  globalThis.testCluster?.discard();
+  globalThis.discardTestCluster?.();
 }

@@ -182,8 +182,10 @@ export async function startCluster(wanted, passwords, { settings = {}, disposabl
   return { port, dir, runsAs: user?.name ?? os.userInfo().username, urlFor, psql, stop };
 }
 
+/** Made beside and moved into place: an interrupted first start leaves nothing that looks like a cluster. */
 function initialise(run, dir, data, user, adminPassword) {
-  fs.rmSync(data, { recursive: true, force: true }); // what an interrupted first start left behind
+  const beginning = `${data}.new`;
+  fs.rmSync(beginning, { recursive: true, force: true });
   const passwordFile = path.join(dir, 'initial-password');
   try {
     fs.writeFileSync(passwordFile, adminPassword, { mode: 0o600 });
@@ -191,7 +193,7 @@ function initialise(run, dir, data, user, adminPassword) {
     const encoding = ['-E', 'UTF8', '--locale=C.UTF-8', '--no-instructions'];
     run('initdb', [
       '-D',
-      data,
+      beginning,
       '-U',
       'admin',
       '-A',
@@ -199,6 +201,7 @@ function initialise(run, dir, data, user, adminPassword) {
       `--pwfile=${passwordFile}`,
       ...encoding,
     ]);
+    fs.renameSync(beginning, data);
   } finally {
     fs.rmSync(passwordFile, { force: true });
   }
