@@ -9,6 +9,7 @@ import net from 'node:net';
 import os from 'node:os';
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { Obstacle } from './steps.mjs';
 
 /** The folder of PostgreSQL's programs, newest version first, or null. */
 export function findPostgres() {
@@ -30,22 +31,29 @@ function unprivilegedUser() {
     const fields = lines.find((line) => line.startsWith(`${name}:`))?.split(':');
     if (fields) return { name, uid: Number(fields[2]), gid: Number(fields[3]) };
   }
-  throw new Error('PostgreSQL cannot run as root, and there is no user "postgres" or "nobody" to run it as.');
+  throw new Obstacle(
+    'PostgreSQL cannot run as root, and there is no user "postgres" or "nobody" to run it as.',
+  );
 }
 
-/** Can that user walk down to the folder? Every parent needs its x bit. */
+/** Can that user walk down to the folder? Every folder on the way needs its x bit. */
 function canReach(dir, user) {
   const asUser = { uid: user.uid, gid: user.gid, cwd: '/' };
   return spawnSync('/bin/sh', ['-c', 'cd "$1"', 'sh', dir], asUser).status === 0;
 }
 
-/** The wanted folder, or, when its parents are closed to the unprivileged user, one named after it elsewhere. */
+/**
+ * The wanted folder, given to the unprivileged user; or, when that user cannot come there (the project lies in a home
+ * that is closed to others), one named after it elsewhere.
+ */
 function reachableFolder(wanted, user) {
   fs.mkdirSync(wanted, { recursive: true });
-  if (!user || canReach(wanted, user)) return wanted;
+  if (!user) return wanted;
   const key = createHash('sha256').update(wanted).digest('hex').slice(0, 12);
-  const dir = path.join(fs.existsSync('/var/lib') ? '/var/lib' : os.tmpdir(), `inchwater-${key}`);
+  const elsewhere = path.join(fs.existsSync('/var/lib') ? '/var/lib' : os.tmpdir(), `inchwater-${key}`);
+  const dir = canReach(path.dirname(wanted), user) ? wanted : elsewhere;
   fs.mkdirSync(dir, { recursive: true });
+  fs.chownSync(dir, user.uid, user.gid);
   return dir;
 }
 
@@ -87,13 +95,12 @@ export const databaseSql = (name) => `
  */
 export async function startCluster(wanted, passwords, { settings = {}, disposable = false } = {}) {
   const bin = findPostgres();
-  if (!bin) throw new Error('PostgreSQL is not installed. Run: sudo apt-get install postgresql');
+  if (!bin) throw new Obstacle('PostgreSQL is not installed. Run: sudo apt-get install postgresql');
   const user = unprivilegedUser();
   const dir = reachableFolder(path.resolve(wanted), user);
   const data = path.join(dir, 'data');
   const log = path.join(dir, 'postgresql.log');
   fs.chmodSync(dir, 0o700);
-  if (user) fs.chownSync(dir, user.uid, user.gid);
   const options = {
     cwd: dir,
     encoding: 'utf8',
@@ -108,7 +115,7 @@ export async function startCluster(wanted, passwords, { settings = {}, disposabl
   const run = (name, args, extra) => {
     const result = attempt(name, args, extra);
     if (result.status === 0) return result.stdout;
-    throw new Error(
+    throw new Obstacle(
       `${name} failed (${result.status ?? result.signal}): ${(result.stderr || result.stdout || `see ${log}`).trim()}`,
     );
   };
@@ -174,7 +181,7 @@ export async function startCluster(wanted, passwords, { settings = {}, disposabl
   } catch (error) {
     stop();
     if (!String(error.message).includes('password authentication failed')) throw error;
-    throw new Error(
+    throw new Obstacle(
       `The PostgreSQL cluster in ${dir} does not take the password in this data folder's secrets.json. ` +
         `Put the old secrets.json back, or, if nothing in it is needed, remove ${dir} to begin anew.`,
     );
