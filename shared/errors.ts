@@ -80,6 +80,11 @@ const table = {
     sentence: 'The server had a fault. What was entered is still here.',
   },
   offline: { status: 0, again: 'later', sentence: 'No network. What was entered is still here.' },
+  not_saved: {
+    status: 0,
+    again: 'later',
+    sentence: 'This device could not store it. What was entered is still here. Try again, or free some space.',
+  },
   timeout: { status: 0, again: 'later', sentence: 'The server did not answer in time. Try again.' },
 } as const;
 
