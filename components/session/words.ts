@@ -1,6 +1,6 @@
 import type { Role } from '@/shared/schema/primitives';
 import type { CalibrationGrade, Chip, Run, SessionState } from '@/shared/schema/records';
-import type { Mark, SessionSummary } from '@/shared/schema/views';
+import type { SessionSummary } from '@/shared/schema/views';
 
 /* The words on screen for what code calls by its names: one place, so that a thing is called the same everywhere. */
 
@@ -15,16 +15,6 @@ const stateWords: Record<SessionState, string> = {
 export function stateWord(session: Pick<SessionSummary, 'state' | 'readingCount'>): string {
   return session.state === 'open' && session.readingCount === 0 ? 'planned' : stateWords[session.state];
 }
-
-const markWords: Record<Mark, string> = {
-  onDevice: 'on this device',
-  sent: 'sent',
-  dispute: 'in dispute',
-  held: 'held',
-  setAside: 'set aside',
-};
-/** Where a record's newest change stands, in words. */
-export const markWord = (mark: Mark): string => markWords[mark];
 
 const gradeWords: Record<CalibrationGrade, string> = {
   traceable: 'traceable: against a flow certificate',

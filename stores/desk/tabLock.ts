@@ -22,5 +22,9 @@ export async function holdTabLock(
 
 /** A channel to the other tabs of this browser; null where there is none. */
 export function openTabChannel(name: string): BroadcastChannel | null {
-  return typeof BroadcastChannel === 'undefined' ? null : new BroadcastChannel(name);
+  if (typeof BroadcastChannel === 'undefined') return null;
+  const channel: BroadcastChannel & { unref?: () => void } = new BroadcastChannel(name);
+  // under Node, where tests run, an open channel would keep the process alive
+  channel.unref?.();
+  return channel;
 }
