@@ -21,10 +21,13 @@ type Api = {
   row: (statement: number) => unknown[];
 };
 
-let ready: Promise<Api> | undefined;
+type MemoryFile = { pathname: string; flags: number; size: number; data: ArrayBuffer };
+type MemoryFiles = { mapNameToFile: Map<string, MemoryFile> };
+
+let ready: Promise<{ api: Api; files: MemoryFiles }> | undefined;
 let fileCount = 0;
 
-async function load(): Promise<Api> {
+async function load(): Promise<{ api: Api; files: MemoryFiles }> {
   // the TextDecoder that jest-expo installs knows UTF-8 only
   Object.defineProperty(globalThis, 'TextDecoder', {
     value: NodeTextDecoder,
@@ -37,13 +40,14 @@ async function load(): Promise<Api> {
     'wa-sqlite.js',
   );
   const sqlite = part<{ Factory: (wasm: Wasm) => Api }>('sqlite-api.js');
-  const { MemoryVFS } = part<{ MemoryVFS: { create: (name: string, wasm: Wasm) => Promise<object> } }>(
+  const { MemoryVFS } = part<{ MemoryVFS: { create: (name: string, wasm: Wasm) => Promise<MemoryFiles> } }>(
     'MemoryVFS.js',
   );
   const wasm = await makeModule({ wasmBinary: fs.readFileSync(path.join(folder, 'wa-sqlite.wasm')) });
   const api = sqlite.Factory(wasm);
-  api.vfs_register(await MemoryVFS.create('mem', wasm), true);
-  return api;
+  const files = await MemoryVFS.create('mem', wasm);
+  api.vfs_register(files, true);
+  return { api, files };
 }
 
 /** A name for a database file that no test has used. */
@@ -51,7 +55,7 @@ export const freshFile = (): string => `device${++fileCount}.db`;
 
 /** Opens a database file; the same name opens the same bytes again. */
 export async function openNodeSqlite(file: string): Promise<DeviceDriver> {
-  const api = await (ready ??= load());
+  const { api } = await (ready ??= load());
   const db = await api.open_v2(file);
   async function all(sql: string, params: unknown[]): Promise<unknown[][]> {
     const rows: unknown[][] = [];
@@ -69,4 +73,18 @@ export async function openNodeSqlite(file: string): Promise<DeviceDriver> {
     run: async (sql, params) => void (await all(sql, params)),
     close: async () => void (await api.close(db)),
   };
+}
+
+/** Copies a database as it lies there at this moment, its write-ahead log too: a disk image, a killed browser's files.
+ * @returns name of the copy */
+export async function copyFiles(from: string): Promise<string> {
+  const { files } = await (ready ??= load());
+  const to = freshFile();
+  for (const suffix of ['', '-wal', '-journal']) {
+    const file = files.mapNameToFile.get(`/${from}${suffix}`);
+    if (!file) continue;
+    const pathname = `/${to}${suffix}`;
+    files.mapNameToFile.set(pathname, { ...file, pathname, data: file.data.slice(0) });
+  }
+  return to;
 }
