@@ -6,6 +6,8 @@ import type { Role } from '@/shared/schema/primitives';
 export const acts = {
   read: { roles: ['operator', 'technician', 'supervisor', 'owner'], states: null },
   keyAndPlan: { roles: ['operator'], states: ['open', 'returned'] },
+  /** a reading's values put right at the desk, or marked as not to be used */
+  correctReading: { roles: ['technician'], states: ['open', 'handedIn', 'returned'] },
   handIn: { roles: ['operator'], states: ['open', 'returned'] },
   planSession: { roles: ['operator', 'supervisor'], states: null },
   enrolDevice: { roles: ['supervisor', 'owner'], states: null },

@@ -108,6 +108,8 @@ CREATE TABLE "sign_ins" (
 	"id" uuid NOT NULL,
 	"person_id" uuid NOT NULL,
 	"current_token_id" uuid NOT NULL,
+	"previous_token_id" uuid,
+	"rotated_at" timestamp with time zone DEFAULT now() NOT NULL,
 	"started_at" timestamp with time zone DEFAULT now() NOT NULL,
 	"last_used_at" timestamp with time zone DEFAULT now() NOT NULL,
 	"expires_at" timestamp with time zone NOT NULL,
@@ -343,7 +345,6 @@ CREATE TABLE "stages" (
 );
 --> statement-breakpoint
 ALTER TABLE "audit" ADD CONSTRAINT "audit_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE "changes" ADD CONSTRAINT "changes_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "disputes" ADD CONSTRAINT "disputes_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "devices" ADD CONSTRAINT "devices_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "enrolment_codes" ADD CONSTRAINT "enrolment_codes_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
@@ -356,27 +357,18 @@ ALTER TABLE "sign_ins" ADD CONSTRAINT "sign_ins_shop_id_shops_id_fk" FOREIGN KEY
 ALTER TABLE "sign_ins" ADD CONSTRAINT "sign_ins_shop_id_person_id_people_shop_id_id_fk" FOREIGN KEY ("shop_id","person_id") REFERENCES "public"."people"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "feeds" ADD CONSTRAINT "feeds_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "benches" ADD CONSTRAINT "benches_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE "calibrations" ADD CONSTRAINT "calibrations_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "calibrations" ADD CONSTRAINT "calibrations_shop_id_bench_id_benches_shop_id_id_fk" FOREIGN KEY ("shop_id","bench_id") REFERENCES "public"."benches"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "customers" ADD CONSTRAINT "customers_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE "heads" ADD CONSTRAINT "heads_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "heads" ADD CONSTRAINT "heads_shop_id_customer_id_customers_shop_id_id_fk" FOREIGN KEY ("shop_id","customer_id") REFERENCES "public"."customers"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE "port_dimensions" ADD CONSTRAINT "port_dimensions_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "port_dimensions" ADD CONSTRAINT "port_dimensions_shop_id_stage_id_stages_shop_id_id_fk" FOREIGN KEY ("shop_id","stage_id") REFERENCES "public"."stages"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE "readings" ADD CONSTRAINT "readings_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "readings" ADD CONSTRAINT "readings_shop_id_run_id_runs_shop_id_id_fk" FOREIGN KEY ("shop_id","run_id") REFERENCES "public"."runs"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE "rungs" ADD CONSTRAINT "rungs_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "rungs" ADD CONSTRAINT "rungs_shop_id_run_id_runs_shop_id_id_fk" FOREIGN KEY ("shop_id","run_id") REFERENCES "public"."runs"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE "runs" ADD CONSTRAINT "runs_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "runs" ADD CONSTRAINT "runs_shop_id_session_id_sessions_shop_id_id_fk" FOREIGN KEY ("shop_id","session_id") REFERENCES "public"."sessions"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE "sessions" ADD CONSTRAINT "sessions_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "sessions" ADD CONSTRAINT "sessions_shop_id_stage_id_stages_shop_id_id_fk" FOREIGN KEY ("shop_id","stage_id") REFERENCES "public"."stages"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "sessions" ADD CONSTRAINT "sessions_shop_id_bench_id_benches_shop_id_id_fk" FOREIGN KEY ("shop_id","bench_id") REFERENCES "public"."benches"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE "stages" ADD CONSTRAINT "stages_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "stages" ADD CONSTRAINT "stages_shop_id_head_id_heads_shop_id_id_fk" FOREIGN KEY ("shop_id","head_id") REFERENCES "public"."heads"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 CREATE UNIQUE INDEX "changes_shop_seq" ON "changes" USING btree ("shop_id","seq") WHERE "changes"."seq" is not null;--> statement-breakpoint
 CREATE INDEX "changes_record" ON "changes" USING btree ("shop_id","table_name","record_id");--> statement-breakpoint
-CREATE INDEX "changes_device_n" ON "changes" USING btree ("shop_id","device_id","n");--> statement-breakpoint
 CREATE INDEX "disputes_record" ON "disputes" USING btree ("shop_id","table_name","record_id");--> statement-breakpoint
 CREATE INDEX "benches_shop_id_seq_index" ON "benches" USING btree ("shop_id","seq");--> statement-breakpoint
 CREATE INDEX "calibrations_shop_id_seq_index" ON "calibrations" USING btree ("shop_id","seq");--> statement-breakpoint

@@ -1,7 +1,7 @@
 import { z } from 'zod';
 
-/** Id of any record: UUIDv7, made where the record is born. */
-export const Id = z.uuid({ version: 'v7', error: 'not a record id' });
+/** Id of any record: UUIDv7, made where the record is born. Lower case only, so that equal ids have equal text. */
+export const Id = z.uuid({ version: 'v7', error: 'not a record id' }).lowercase({ error: 'not a record id' });
 export type Id = z.infer<typeof Id>;
 
 /** Instant, ISO 8601 in UTC. */
@@ -40,6 +40,7 @@ export type Side = z.infer<typeof Side>;
 export const Direction = z.enum(['drawing', 'blowing']);
 export type Direction = z.infer<typeof Direction>;
 export const Pass = z.enum(['up', 'down', 'mixed']);
+export type Pass = z.infer<typeof Pass>;
 export const DecimalMark = z.enum(['.', ',']);
 export type DecimalMark = z.infer<typeof DecimalMark>;
 

@@ -70,6 +70,9 @@ export const signIns = pgTable(
     personId: uuid('person_id').notNull(),
     /** id of the only refresh token that is good now */
     currentTokenId: uuid('current_token_id').notNull(),
+    /** the one before it, and since when: two tabs that refresh at the same moment are no theft */
+    previousTokenId: uuid('previous_token_id'),
+    rotatedAt: instant('rotated_at').notNull().defaultNow(),
     startedAt: instant('started_at').notNull().defaultNow(),
     lastUsedAt: instant('last_used_at').notNull().defaultNow(),
     expiresAt: instant('expires_at').notNull(),

@@ -6,6 +6,6 @@ export const syncedColumns = () => ({
   id: uuid('id').notNull(),
   version: integer('version').notNull(),
   deleted: boolean('deleted').notNull().default(false),
-  /** position in the shop's feed, drawn by the trigger while the shop's feed lock is held */
+  /** position in the shop's feed, drawn from the shop's counter while its feed lock is held */
   seq: bigint('seq', { mode: 'number' }).notNull(),
 });

@@ -1,0 +1,26 @@
+import type { Row } from '@/shared/sync/merge';
+import type { Fields } from '@/shared/sync/protocol';
+import type { SyncTable } from '@/shared/sync/syncTables';
+import type { ShopTx } from '../transaction';
+import { syncedSql } from './syncedSql';
+
+/** Records whose `field` is one of the ids, deleted ones too. */
+export async function readRows(
+  tx: ShopTx,
+  table: SyncTable,
+  field: string,
+  ids: readonly string[],
+): Promise<Row[]> {
+  if (ids.length === 0) return [];
+  const { rows } = await tx.client.query<StoredRow>(syncedSql[table].readBy(field), [ids]);
+  return rows.map(toRow);
+}
+
+/** Living records of a whole table, in the order they were born. */
+export async function readAll(tx: ShopTx, table: SyncTable): Promise<Row[]> {
+  const { rows } = await tx.client.query<StoredRow>(syncedSql[table].readAll);
+  return rows.map(toRow);
+}
+
+type StoredRow = { id: string; version: number; deleted: boolean } & Fields;
+const toRow = ({ id, version, deleted, ...fields }: StoredRow): Row => ({ id, version, deleted, fields });
