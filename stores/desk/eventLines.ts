@@ -1,5 +1,5 @@
-/** Reads a stream of server-sent events and reports each event, with its name and data. Comments are reported too, as
- * `beat`: they show that the line still stands.
+/** Reads a stream of server-sent events and reports each event, with its name and data. What carries no data is reported
+ * too, as `beat`: it shows that the line still stands.
  */
 export async function readEvents(
   body: ReadableStream<Uint8Array>,
@@ -22,6 +22,7 @@ function eventOf(block: string): { name: string; data: string } {
   const valueOf = (field: string) =>
     lines.filter((line) => line.startsWith(`${field}:`)).map((line) => line.slice(field.length + 1).trim());
   const data = valueOf('data').join('\n');
-  const isBeat = lines.every((line) => line.startsWith(':') || line === '');
+  // comments and settings of the line carry no data
+  const isBeat = data === '';
   return { name: isBeat ? 'beat' : (valueOf('event')[0] ?? 'message'), data };
 }
