@@ -30,11 +30,11 @@ async function leave(code) {
 }
 
 function begin(name, args, env) {
-  const program = spawn(process.execPath, args, {
-    cwd: root,
-    env: { ...process.env, ...env },
-    stdio: 'inherit',
-  });
+  // no terminal of its own: Expo would take the keyboard, and with it Ctrl-C
+  const stdio = ['ignore', 'pipe', 'pipe'];
+  const program = spawn(process.execPath, args, { cwd: root, env: { ...process.env, ...env }, stdio });
+  program.stdout.pipe(process.stdout, { end: false });
+  program.stderr.pipe(process.stderr, { end: false });
   programs.push(program);
   program.once('exit', (code, signal) => {
     if (leaving) return;
@@ -70,7 +70,6 @@ async function main() {
       EXPO_NO_TELEMETRY: '1',
       EXPO_NO_DOTENV: '1',
       BROWSER: 'none',
-      CI: process.env.CI ?? '',
       // "localhost" must be the IPv4 loopback, as everywhere else
       NODE_OPTIONS: `${process.env.NODE_OPTIONS ?? ''} --dns-result-order=ipv4first`.trim(),
     },
