@@ -6,6 +6,7 @@ import { Stack } from '@/components/ui/Layout';
 import { EmptyState } from '@/components/ui/States';
 import { TextField } from '@/components/ui/TextField';
 import { space } from '@/components/ui/tokens';
+import { webProps } from '@/components/ui/webProps';
 import type { SessionSummary } from '@/shared/schema/views';
 import { FilterChips } from './FilterChips';
 import { Loaded, type Asked } from './Loaded';
@@ -31,12 +32,14 @@ export function SessionList(props: Props) {
   return (
     <Stack gap="m">
       {onPlan ? <Button title="Plan a session" kind="primary" icon="add" isWide onPress={onPlan} /> : null}
-      <TextField
-        label="Find"
-        value={filter.text}
-        onChange={(text) => onFilter({ ...filter, text })}
-        hint="Number, customer, head, stage, bench or name"
-      />
+      <View {...webProps({ dataSet: { find: 'sessions' } })}>
+        <TextField
+          label="Find"
+          value={filter.text}
+          onChange={(text) => onFilter({ ...filter, text })}
+          hint="Number, customer, head, stage, bench or name"
+        />
+      </View>
       <FilterChips
         label="State"
         options={stateFilters}

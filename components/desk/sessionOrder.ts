@@ -33,3 +33,22 @@ function searchable(session: SessionSummary): string {
 export function stateFilterOf(text: string | undefined): string {
   return (stateFilters as readonly string[]).includes(text ?? '') ? (text as string) : 'all';
 }
+
+/** The sessions before and after one in a list; from nothing chosen, the first comes next. */
+export function neighboursOf(
+  shown: readonly SessionSummary[],
+  selectedId: string | null,
+): { earlierId: string | null; laterId: string | null } {
+  const at = shown.findIndex((session) => session.id === selectedId);
+  if (at < 0) return { earlierId: null, laterId: shown[0]?.id ?? null };
+  return { earlierId: shown[at - 1]?.id ?? null, laterId: shown[at + 1]?.id ?? null };
+}
+
+/** Address of a session, with the list narrowed as it was. */
+export function sessionHref(sessionId: string | null, filter: SessionFilter): string {
+  const query = new URLSearchParams();
+  if (filter.state !== 'all') query.set('state', filter.state);
+  if (filter.text.trim()) query.set('find', filter.text.trim());
+  const text = query.toString();
+  return `${sessionId ? `/desk/sessions/${sessionId}` : '/desk'}${text ? `?${text}` : ''}`;
+}

@@ -22,6 +22,8 @@ type DeskState = {
   start: () => Promise<void>;
   signIn: (mail: string, password: string) => Promise<void>;
   signOut: (where: 'here' | 'everywhere') => Promise<void>;
+  /** goes on without signing in again after the server ended the sign-in */
+  leave: () => void;
   /** a token that still holds; `refused` is one the server just turned away */
   freshToken: (refused?: string) => Promise<string>;
 };
@@ -94,6 +96,7 @@ export const useDeskStore = create<DeskState>()((set, get) => {
       leave('signedOut');
       tabs?.postMessage('signedOut');
     },
+    leave: () => leave('signedOut'),
     freshToken: async (refused) => {
       const held = get().signedIn;
       if (held && get().phase === 'signedIn' && held.accessToken !== refused) {

@@ -1,0 +1,13 @@
+import { Screen } from '@/components/ui/Screen';
+import { EmptyState } from '@/components/ui/States';
+
+export default function SessionsRoute() {
+  return (
+    <Screen title="Sessions">
+      <EmptyState
+        title="Choose a session"
+        sentence="Its runs and readings show here, as they come in from the bench. The oldest unfinished one stands on top of the list. The key ? shows what can be done by keyboard."
+      />
+    </Screen>
+  );
+}

@@ -1,0 +1,107 @@
+import { Redirect, Slot, useGlobalSearchParams, usePathname, useRouter } from 'expo-router';
+import { useEffect, useMemo, useState } from 'react';
+import { AccountSheet } from '@/components/desk/AccountSheet';
+import { DeskFrame } from '@/components/desk/DeskFrame';
+import { placeAfterSignIn, placesAt, signInHref } from '@/components/desk/deskPlaces';
+import { DeskUnreachable } from '@/components/desk/DeskUnreachable';
+import { KeysSheet } from '@/components/desk/KeysSheet';
+import { SignInForm } from '@/components/desk/SignInForm';
+import { useDeskKeys } from '@/components/desk/useDeskKeys';
+import { Screen } from '@/components/ui/Screen';
+import { Sheet } from '@/components/ui/Sheet';
+import { Progress } from '@/components/ui/States';
+import { ThemeProvider } from '@/components/ui/ThemeProvider';
+import { useDeskStore } from '@/stores/desk/deskStore';
+import { useNewsStore } from '@/stores/desk/newsStore';
+import { usePreferencesStore } from '@/stores/desk/preferencesStore';
+import { useMay } from '@/stores/desk/useMay';
+import { useDeskNews } from '@/stores/queries/deskQueries';
+
+export default function DeskLayout() {
+  const theme = usePreferencesStore((state) => state.theme);
+  return (
+    <ThemeProvider place="desk" choice={theme}>
+      <Guarded />
+    </ThemeProvider>
+  );
+}
+
+/** Lets in who is signed in, and brings everybody else to the sign-in with the address kept. */
+function Guarded() {
+  const { phase, start } = useDeskStore();
+  const path = usePathname();
+  const { next } = useGlobalSearchParams<{ next?: string }>();
+  const isAtSignIn = path === '/desk/sign-in';
+  useEffect(() => {
+    if (phase === 'starting') void start();
+  }, [phase, start]);
+
+  if (phase === 'starting')
+    return (
+      <Screen title="Desk" width="narrow">
+        <Progress label="The desk opens" />
+      </Screen>
+    );
+  if (phase === 'unreachable') return <DeskUnreachable onTryAgain={() => void start()} />;
+  if (phase === 'signedOut') return isAtSignIn ? <Slot /> : <Redirect href={signInHref(path)} />;
+  return isAtSignIn ? <Redirect href={placeAfterSignIn(next)} /> : <Inside />;
+}
+
+/** The frame around every desk screen, for somebody who is, or was a moment ago, signed in. */
+function Inside() {
+  const { phase, signedIn, personOrdinal, signIn, signOut, leave } = useDeskStore();
+  const isLive = useNewsStore((state) => state.isLive);
+  const { theme, hasKeys, prefer } = usePreferencesStore();
+  const path = usePathname();
+  const router = useRouter();
+  const [front, setFront] = useState<'account' | 'keys' | null>(null);
+  useDeskNews();
+  const mayPlan = useMay('planSession');
+  const keys = useMemo(
+    () => ({
+      '?': () => setFront('keys'),
+      p: hasKeys && mayPlan ? () => router.push('/desk/sessions/plan') : null,
+    }),
+    [hasKeys, mayPlan, router],
+  );
+  useDeskKeys(keys);
+  if (!signedIn) return null;
+  return (
+    <DeskFrame
+      places={placesAt(path)}
+      shopName={signedIn.shop.name}
+      personName={signedIn.person.name}
+      {...(isLive
+        ? {}
+        : { notice: 'News do not come by themselves just now; the desk looks every 10 seconds.' })}
+      onGo={(href) => router.push(href)}
+      onAccount={() => setFront('account')}
+    >
+      <Slot key={personOrdinal} />
+      {front === 'account' ? (
+        <AccountSheet
+          signedIn={signedIn}
+          theme={theme}
+          onTheme={(choice) => prefer({ theme: choice })}
+          signOut={signOut}
+          onClose={() => setFront(null)}
+        />
+      ) : null}
+      {front === 'keys' ? (
+        <KeysSheet
+          areOn={hasKeys}
+          onSwitch={(areOn) => prefer({ hasKeys: areOn })}
+          onClose={() => setFront(null)}
+        />
+      ) : null}
+      {phase === 'ended' ? (
+        <Sheet title="Sign in again" closeTitle="Leave" onClose={leave}>
+          <SignInForm
+            reason="This sign-in has ended. What is on screen, and what you entered, stays; sign in to go on."
+            signIn={signIn}
+          />
+        </Sheet>
+      ) : null}
+    </DeskFrame>
+  );
+}

@@ -1,0 +1,34 @@
+import { DeviceList } from '@/components/desk/DeviceList';
+import { EnrolmentCard } from '@/components/desk/EnrolmentCard';
+import { Loaded } from '@/components/desk/Loaded';
+import { Screen } from '@/components/ui/Screen';
+import { useMay } from '@/stores/desk/useMay';
+import { useDevices, useMakeEnrolmentCode, useRevokeDevice } from '@/stores/queries/deskQueries';
+
+export default function DevicesRoute() {
+  const mayEnrol = useMay('enrolDevice');
+  const mayRevoke = useMay('revokeDevice');
+  const devices = useDevices();
+  const makeCode = useMakeEnrolmentCode();
+  const revoke = useRevokeDevice();
+  return (
+    <Screen title="Devices" subtitle="Tablets and phones that key at the bench">
+      {mayEnrol ? (
+        <EnrolmentCard
+          makeCode={() => makeCode.mutateAsync()}
+          addressFor={(code) => `${window.location.origin}/bench/enrol?code=${code}`}
+        />
+      ) : null}
+      <Loaded
+        asked={{
+          data: devices.data?.devices,
+          error: devices.error,
+          onTryAgain: () => void devices.refetch(),
+        }}
+        name="Devices"
+      >
+        {(data) => <DeviceList devices={data} shutOut={mayRevoke ? revoke.mutateAsync : null} />}
+      </Loaded>
+    </Screen>
+  );
+}
