@@ -10,37 +10,10 @@ import { loadDraft, saveDraft } from '@/stores/bench/drafts';
 import { readSession } from '@/stores/queries/benchReads';
 import { enrolledDevice, feed, item, noon, standAtBench } from '../factories/deviceFixture';
 import { copyFiles, freshFile, openNodeSqlite } from '../factories/nodeSqlite';
+import { mortal } from '../factories/mortalDriver';
 import { readingFields } from '../factories/records';
 
 const atIso = new Date(noon).toISOString();
-
-/** A driver that dies: the call with that number never comes back, and none after it. */
-function mortal(
-  driver: DeviceDriver,
-): DeviceDriver & { dieAt: (callsFromNow: number) => void; count: () => number } {
-  let left = Infinity;
-  let count = 0;
-  const guard =
-    <A extends unknown[], R>(call: (...args: A) => Promise<R>, isAfter: boolean) =>
-    async (...args: A): Promise<R> => {
-      count += 1;
-      left -= 1;
-      if (left < 0) throw new Error('killed');
-      const result = await call(...args);
-      if (left === 0 && isAfter) throw new Error('killed');
-      return result;
-    };
-  return {
-    exec: guard(driver.exec, true),
-    all: guard(driver.all, false),
-    run: guard(driver.run, true),
-    close: driver.close,
-    dieAt: (callsFromNow) => {
-      left = callsFromNow;
-    },
-    count: () => count,
-  };
-}
 
 async function sessionWithRun(driver: DeviceDriver) {
   const { db, ids } = await enrolledDevice({ driver });
@@ -87,13 +60,13 @@ it('keeps a reading whole or not at all, wherever the browser is killed while it
     const file = await copyFiles(original);
     const driver = mortal(await openNodeSqlite(file));
     standAtBench(await prepareDeviceDb(driver), ids.person);
-    const before = driver.count();
+    const before = driver.callCount();
     driver.dieAt(step);
     const wasSaid = await saveReading({ ...keyed(runId, '101'), nextDraft: { flow: '' } }).then(
       () => true,
       () => false,
     );
-    const calls = driver.count() - before;
+    const calls = driver.callCount() - before;
 
     const again = await prepareDeviceDb(await openNodeSqlite(file));
     standAtBench(again, ids.person);

@@ -1,7 +1,7 @@
 import { asc } from 'drizzle-orm';
 import { nextBatch, storeVerdicts } from '@/db/device/outbox';
 import { outbox } from '@/db/device/schema/deviceTables';
-import { AppError } from '@/shared/errors';
+import { type AppError } from '@/shared/errors';
 import { keepCopyAsFile } from '@/stores/bench/keepCopy';
 import { readStatus } from '@/stores/bench/readStatus';
 import { startSession, type StartSessionInput } from '@/stores/bench/startSession';
