@@ -41,11 +41,7 @@ export function BenchPick({
           problem={problem ?? null}
         />
         {items.length > 0 ? (
-          <Button
-            title="Change"
-            label={`Change the ${label.toLowerCase()}`}
-            onPress={() => onChange(null)}
-          />
+          <Button title="Change" label={`Change the ${label.toLowerCase()}`} onPress={() => onChange(null)} />
         ) : null}
       </Stack>
     );

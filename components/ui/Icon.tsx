@@ -23,6 +23,8 @@ const paths = {
   up: 'M12 20V4M5 11l7-7 7 7',
   down: 'M12 4v16M5 13l7 7 7-7',
   note: 'M4 4h16v11l-5 5H4zM8 9h8M8 13h5',
+  /** the water column with three rungs */
+  column: 'M8 2v17a4 4 0 0 0 8 0V2M8 12h8M11 7h2M11 16h2',
   door: 'M13 4h7v16h-7M4 12h10M10 8l4 4-4 4',
 } as const;
 export type IconName = keyof typeof paths;

@@ -1,0 +1,61 @@
+import { localTime } from '@/components/session/localTime';
+import type { StatusFacts } from '@/components/ui/StatusStrip';
+
+/** Where the readings of a device are, in numbers. */
+export type DeviceStanding = {
+  state: 'idle' | 'sending' | 'waiting' | 'offline' | 'enrolAgain' | 'revoked' | 'updateNeeded';
+  unsentCount: number;
+  setAsideCount: number;
+  heldCount: number;
+  disputeCount: number;
+  oldestUnsentAt: string | null;
+  lastSentAt: string | null;
+};
+
+const hourMs = 60 * 60 * 1000;
+const oldFromMs = 24 * hourMs;
+
+/** The three facts of the status strip. */
+export function statusFacts(who: string, sync: DeviceStanding, now: Date): StatusFacts {
+  const ageMs = sync.oldestUnsentAt === null ? 0 : now.getTime() - Date.parse(sync.oldestUnsentAt);
+  const isOld = sync.unsentCount > 0 && ageMs > oldFromMs;
+  return { who, where: whereWords(sync, ageMs, isOld), isOld, needsPersonCount: needsPerson(sync) };
+}
+
+function whereWords(sync: DeviceStanding, ageMs: number, isOld: boolean): string {
+  if (sync.unsentCount > 0) {
+    const days = Math.floor(ageMs / (24 * hourMs));
+    return isOld
+      ? `${sync.unsentCount} on this device for ${days === 1 ? '1 day' : `${days} days`}`
+      : `${sync.unsentCount} saved on this device`;
+  }
+  return sync.lastSentAt === null ? 'nothing to send yet' : `all sent ${localTime(sync.lastSentAt)}`;
+}
+
+/** How many things stand until a person does something about them. */
+function needsPerson(sync: DeviceStanding): number {
+  const isDeviceStuck = ['enrolAgain', 'revoked', 'updateNeeded'].includes(sync.state);
+  return sync.setAsideCount + sync.heldCount + sync.disputeCount + (isDeviceStuck ? 1 : 0);
+}
+
+/** What the network does for the readings, in one sentence. */
+export function sendingSentence(sync: DeviceStanding): string {
+  switch (sync.state) {
+    case 'sending':
+      return 'Sending now.';
+    case 'offline':
+      return 'No network. Everything is saved on this device and will be sent when the network is back.';
+    case 'waiting':
+      return 'The server could not take it just now. It is tried again by itself.';
+    case 'enrolAgain':
+      return 'The shop no longer knows this device. Enrol it again; the readings on it stay.';
+    case 'revoked':
+      return 'This device was shut out by the shop. What is on it stays; ask the supervisor.';
+    case 'updateNeeded':
+      return 'This version of the app is too old to send. Take the new version; the readings stay.';
+    case 'idle':
+      return sync.unsentCount > 0
+        ? 'Saved on this device. It is sent by itself.'
+        : 'Everything on this device was sent.';
+  }
+}
