@@ -28,8 +28,8 @@ const facts = {
   lastPrunedAt: Instant,
   /** how far the server's clock is ahead of the device's, in milliseconds; shown, never used */
   clockOffsetMs: z.number(),
-  /** sessions whose safety card was read here, newest last */
-  safetyRead: z.array(Id),
+  /** who read the safety card of which session here, newest last: person, a space, session */
+  safetyRead: z.array(z.string().max(80)),
 } as const;
 
 type Facts = typeof facts;

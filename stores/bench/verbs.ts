@@ -219,16 +219,21 @@ export function handInSession(sessionId: string): Promise<void> {
   });
 }
 
-/** Notes on this device that the safety card of a session was read. */
+/** Notes on this device that the person signed in has read the safety card of a session. */
 export async function noteSafetyRead(sessionId: string): Promise<void> {
-  const { db } = benchDevice();
+  const { db, personId } = benchDevice();
+  const mark = safetyMark(sessionId, personId());
   await stored(() =>
     db.tx(async (tx) => {
       const read = (await getFact(tx, 'safetyRead')) ?? [];
-      if (!read.includes(sessionId)) await setFact(tx, 'safetyRead', [...read, sessionId].slice(-200));
+      if (!read.includes(mark)) await setFact(tx, 'safetyRead', [...read, mark].slice(-400));
     }),
   );
 }
+
+/** How a reading of the safety card is noted: once per person and session. */
+export const safetyMark = (sessionId: string, personId: string | null): string =>
+  `${personId ?? ''} ${sessionId}`;
 
 async function livingReading(tx: DeviceTx, readingId: string): Promise<typeof readings.$inferSelect> {
   const [reading] = await tx

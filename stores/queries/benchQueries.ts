@@ -8,6 +8,7 @@ import { peopleHere } from '@/db/device/rosterStore';
 import { benchDevice } from '@/stores/bench/benchDevice';
 import { useBenchStore } from '@/stores/bench/benchStore';
 import { loadDraft } from '@/stores/bench/drafts';
+import { safetyMark } from '@/stores/bench/verbs';
 import { readUnsent, type UnsentItem } from '@/stores/bench/unsentWords';
 import { readCatalogue, readSession, readSessions } from './benchReads';
 import { useFollowCommits } from './followCommits';
@@ -58,11 +59,13 @@ export const useRoster = (): UseQueryResult<RosterItem[]> =>
 /** What the shop has not taken: waiting, in dispute, held, set aside. */
 export const useUnsent = (): UseQueryResult<UnsentItem[]> => useBenchQuery(['rest', 'unsent'], readUnsent);
 
-/** True when the safety card of the session was read on this device. */
-export const useSafetyRead = (sessionId: string): UseQueryResult<boolean> =>
-  useBenchQuery(['session', sessionId, 'safety'], async (tx) =>
-    ((await getFact(tx, 'safetyRead')) ?? []).includes(sessionId),
+/** True when the person signed in has read the safety card of the session on this device. */
+export function useSafetyRead(sessionId: string): UseQueryResult<boolean> {
+  const personId = useBenchStore((state) => state.person?.id ?? null);
+  return useBenchQuery(['session', sessionId, 'safety', personId ?? ''], async (tx) =>
+    ((await getFact(tx, 'safetyRead')) ?? []).includes(safetyMark(sessionId, personId)),
   );
+}
 
 /** What was half-keyed in a run when its screen was left. Read once: the screen owns it from then on. */
 export function useDraft(runId: string): UseQueryResult<unknown> {

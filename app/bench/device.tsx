@@ -1,0 +1,33 @@
+import { useRouter } from 'expo-router';
+import { DeviceSettings } from '@/components/bench/DeviceSettings';
+import { Screen } from '@/components/ui/Screen';
+import { useBenchStore } from '@/stores/bench/benchStore';
+import { usePreferencesStore } from '@/stores/preferences/preferencesStore';
+
+export default function BenchDeviceRoute() {
+  const router = useRouter();
+  const { shop, device, person, lock } = useBenchStore();
+  const { theme, keySize, choose } = usePreferencesStore();
+  return (
+    <Screen
+      title="This device"
+      onBack={() => router.push('/bench')}
+      backHref="/bench"
+      backLabel="Back to sessions"
+    >
+      <DeviceSettings
+        shopName={shop?.name ?? ''}
+        deviceName={device?.name ?? ''}
+        personName={person?.name ?? ''}
+        theme={theme}
+        keySize={keySize}
+        onTheme={(next) => choose({ theme: next })}
+        onKeySize={(next) => choose({ keySize: next })}
+        onChangePerson={() => {
+          lock();
+          router.replace('/bench');
+        }}
+      />
+    </Screen>
+  );
+}
