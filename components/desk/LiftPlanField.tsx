@@ -7,7 +7,7 @@ import { Stack } from '@/components/ui/Layout';
 import { TextField } from '@/components/ui/TextField';
 import { space } from '@/components/ui/tokens';
 import type { DecimalMark, LiftUnit } from '@/shared/schema/primitives';
-import { readLiftPlan, stepPlan } from './liftPlan';
+import { liftsBySteps, liftsFromList } from '@/shared/session/liftPlan';
 
 type Props = {
   text: string;
@@ -22,9 +22,15 @@ type Props = {
 /** The lifts to pull: written out, or filled in equal steps. */
 export function LiftPlanField({ text, unit, decimalMark, isChecked, onText, onUnit }: Props) {
   const [steps, setSteps] = useState({ from: '', to: '', step: '' });
-  const filled = stepPlan(steps.from, steps.to, steps.step, decimalMark);
-  const plan = readLiftPlan(text, unit);
-  const isStepsWritten = Boolean(steps.from && steps.to && steps.step);
+  const filled = liftsBySteps(
+    { firstText: steps.from, lastText: steps.to, stepText: steps.step, unit },
+    decimalMark,
+  );
+  const plan = liftsFromList(text, unit, decimalMark);
+  const areStepsWritten = Boolean(steps.from && steps.to && steps.step);
+  const fill = () => {
+    if ('lifts' in filled) onText(filled.lifts.map((lift) => lift.text).join(' '));
+  };
   return (
     <Stack gap="m">
       <Choice<LiftUnit>
@@ -49,15 +55,11 @@ export function LiftPlanField({ text, unit, decimalMark, isChecked, onText, onUn
             />
           </View>
         ))}
-        <Button
-          title="Fill in"
-          isDisabled={filled === null}
-          onPress={() => filled !== null && onText(filled)}
-        />
+        <Button title="Fill in" isDisabled={!('lifts' in filled)} onPress={fill} />
       </View>
-      {isStepsWritten && filled === null ? (
-        <AppText variant="small" color="quietInk">
-          These three do not make a plan: the end lies above the start, and 60 lifts are the most.
+      {areStepsWritten && 'sentence' in filled ? (
+        <AppText variant="small" weight="600" color="redOxide">
+          {filled.sentence}
         </AppText>
       ) : null}
       <TextField
@@ -66,9 +68,9 @@ export function LiftPlanField({ text, unit, decimalMark, isChecked, onText, onUn
         isMultiline
         value={text}
         onChange={onText}
-        problem={isChecked || text.trim() ? plan.problem : null}
+        problem={(isChecked || text.trim()) && 'sentence' in plan ? plan.sentence : null}
       />
-      {plan.problem === null ? (
+      {'lifts' in plan ? (
         <AppText variant="small" color="quietInk">{`${plan.lifts.length} lifts`}</AppText>
       ) : null}
     </Stack>

@@ -8,11 +8,11 @@ import { TextField } from '@/components/ui/TextField';
 import type { DeskChange, PlanSessionRequest } from '@/shared/schema/api';
 import type { LiftUnit } from '@/shared/schema/primitives';
 import type { ShopSettings } from '@/shared/schema/records';
+import { liftsFromList } from '@/shared/session/liftPlan';
 import type { Catalogue } from '@/shared/schema/views';
 import type { VerdictOf } from '@/shared/sync/protocol';
 import { checkNote, checkNumber } from './checks';
 import { LiftPlanField } from './LiftPlanField';
-import { readLiftPlan } from './liftPlan';
 import { NewCustomerSheet, NewHeadSheet, NewStageSheet } from './newForms';
 import { PickList } from './PickList';
 import { problemOf } from './problemOf';
@@ -50,7 +50,7 @@ export function PlanForm({ catalogue, shop, mayAdd, plan, send, onPlanned }: Pro
   const stages = catalogue.stages
     .filter((stage) => stage.headId === headId)
     .sort((a, b) => a.stageOrdinal - b.stageOrdinal);
-  const lifts = readLiftPlan(liftText, liftUnit);
+  const lifts = liftsFromList(liftText, liftUnit, shop.decimalMark);
   const pressureProblem = checkNumber(pressureText);
   const noteProblem = checkNote(note);
 
@@ -66,7 +66,7 @@ export function PlanForm({ catalogue, shop, mayAdd, plan, send, onPlanned }: Pro
   const submit = async () => {
     setIsChecked(true);
     setError(null);
-    if (isBusy || !stageId || !benchId || lifts.problem || pressureProblem || noteProblem) return;
+    if (isBusy || !stageId || !benchId || 'sentence' in lifts || pressureProblem || noteProblem) return;
     setIsBusy(true);
     try {
       await plan({
