@@ -368,8 +368,8 @@ ALTER TABLE "sessions" ADD CONSTRAINT "sessions_shop_id_stage_id_stages_shop_id_
 ALTER TABLE "sessions" ADD CONSTRAINT "sessions_shop_id_bench_id_benches_shop_id_id_fk" FOREIGN KEY ("shop_id","bench_id") REFERENCES "public"."benches"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "stages" ADD CONSTRAINT "stages_shop_id_head_id_heads_shop_id_id_fk" FOREIGN KEY ("shop_id","head_id") REFERENCES "public"."heads"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 CREATE UNIQUE INDEX "changes_shop_seq" ON "changes" USING btree ("shop_id","seq") WHERE "changes"."seq" is not null;--> statement-breakpoint
-CREATE INDEX "changes_record" ON "changes" USING btree ("shop_id","table_name","record_id");--> statement-breakpoint
-CREATE INDEX "disputes_record" ON "disputes" USING btree ("shop_id","table_name","record_id");--> statement-breakpoint
+CREATE INDEX "changes_record" ON "changes" USING btree ("shop_id","record_id");--> statement-breakpoint
+CREATE INDEX "disputes_record" ON "disputes" USING btree ("shop_id","record_id");--> statement-breakpoint
 CREATE INDEX "benches_shop_id_seq_index" ON "benches" USING btree ("shop_id","seq");--> statement-breakpoint
 CREATE INDEX "calibrations_shop_id_seq_index" ON "calibrations" USING btree ("shop_id","seq");--> statement-breakpoint
 CREATE INDEX "calibrations_shop_id_bench_id_index" ON "calibrations" USING btree ("shop_id","bench_id");--> statement-breakpoint

@@ -13,7 +13,7 @@ export function atDesk(ctx: PersonCtx, given: DeskChange): Incoming {
 
 export const deskBatch = (ctx: PersonCtx): Batch => ({
   source: 'desk',
-  deviceId: null,
+  device: null,
   isRevoked: false,
   receivedAt: ctx.clock(),
 });

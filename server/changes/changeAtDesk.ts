@@ -3,10 +3,9 @@ import { AppError } from '@/shared/errors';
 import { DeskChangesRequest } from '@/shared/schema/api';
 import type { Change, VerdictOf } from '@/shared/sync/protocol';
 import { isSyncTable, syncTables, type SyncTable } from '@/shared/sync/syncTables';
-import { applyChanges, readVerdicts } from '@/db/server/sync/applyChanges';
+import { readVerdicts, withChanges } from '@/db/server/sync/applyChanges';
 import { stateOf } from '@/db/server/sync/judgeChanges';
-import { loadRecords } from '@/db/server/sync/loadRecords';
-import { withShopWrite } from '@/db/server/transaction';
+import { look } from '@/db/server/sync/look';
 import { need } from '../access';
 import type { PersonCtx } from '../ctx';
 import { parse } from '../http/parse';
@@ -32,7 +31,7 @@ export async function changeAtDesk(ctx: PersonCtx, raw: unknown): Promise<{ verd
   const { changes } = parse(DeskChangesRequest, raw);
   const incoming = changes.map((change) => atDesk(ctx, change));
   for (const { change } of incoming) if (change) refuseByRole(ctx, change);
-  return withShopWrite(ctx.db, ctx.actor.shopId, async (tx) => {
+  return withChanges(ctx.db, ctx.actor.shopId, async (tx, apply) => {
     const known = await readVerdicts(
       tx,
       incoming.map((one) => one.id),
@@ -41,7 +40,7 @@ export async function changeAtDesk(ctx: PersonCtx, raw: unknown): Promise<{ verd
       (one) => !known.has(one.id),
     );
     const read = fresh.flatMap(({ change }) => (change ? [change] : []));
-    const records = await loadRecords(tx, read);
+    const { records } = await look(tx, read);
     for (const change of read) {
       if (!isSyncTable(change.table)) continue;
       const before = records.get(change.table, change.rid);
@@ -49,7 +48,7 @@ export async function changeAtDesk(ctx: PersonCtx, raw: unknown): Promise<{ verd
       if (!isCorrection(change) || !may(ctx.actor.roles, 'correctReading', state))
         need(ctx, actOf[change.table], state);
     }
-    for (const verdict of await applyChanges(tx, deskBatch(ctx), fresh)) known.set(verdict.id, verdict);
+    for (const verdict of await apply(deskBatch(ctx), fresh)) known.set(verdict.id, verdict);
     return { verdicts: incoming.flatMap((one) => known.get(one.id) ?? []) };
   });
 }

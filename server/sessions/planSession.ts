@@ -3,9 +3,9 @@ import { PlanSessionRequest } from '@/shared/schema/api';
 import { Calibration, type Session } from '@/shared/schema/records';
 import { sessionSettings } from '@/shared/session/startSession';
 import { shops } from '@/db/server/schema/shops';
-import { applyChanges } from '@/db/server/sync/applyChanges';
+import { withChanges } from '@/db/server/sync/applyChanges';
 import { readRows } from '@/db/server/sync/readRows';
-import { withShopWrite, type ShopTx } from '@/db/server/transaction';
+import type { ShopTx } from '@/db/server/transaction';
 import type { PersonCtx } from '../ctx';
 import { need } from '../access';
 import { atDesk, deskBatch } from '../changes/atDesk';
@@ -18,7 +18,7 @@ import { parse } from '../http/parse';
 export async function planSession(ctx: PersonCtx, raw: unknown): Promise<{ id: string; label: string }> {
   need(ctx, 'planSession');
   const request = parse(PlanSessionRequest, raw);
-  return withShopWrite(ctx.db, ctx.actor.shopId, async (tx) => {
+  return withChanges(ctx.db, ctx.actor.shopId, async (tx, apply) => {
     const [planned] = await readRows(tx, 'sessions', 'id', [request.id]);
     if (planned) return { id: planned.id, label: String(planned.fields.label) };
     const session = await newSession(ctx, tx, request);
@@ -30,7 +30,7 @@ export async function planSession(ctx: PersonCtx, raw: unknown): Promise<{ id: s
       base: {},
       set: session,
     });
-    const [verdict] = await applyChanges(tx, deskBatch(ctx), [change]);
+    const [verdict] = await apply(deskBatch(ctx), [change]);
     // what does not apply leaves no trace: it was no change of a device that could be asked about it
     if (verdict?.verdict !== 'applied') throw new AppError('no_such_record');
     return { id: request.id, label: session.label };

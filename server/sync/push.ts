@@ -1,9 +1,9 @@
 import { AppError } from '@/shared/errors';
 import { PushRequest, type PushResponse, type VerdictOf } from '@/shared/sync/protocol';
-import { readEpoch } from '@/db/server/epoch';
-import { applyChanges, readVerdicts } from '@/db/server/sync/applyChanges';
+import { epochSql } from '@/db/server/epoch';
+import { readVerdicts, withChanges } from '@/db/server/sync/applyChanges';
 import type { Incoming } from '@/db/server/sync/incoming';
-import { withShopWrite, type ShopTx } from '@/db/server/transaction';
+import type { ShopTx } from '@/db/server/transaction';
 import type { DeviceCtx } from '../ctx';
 import { readChange } from './readChange';
 
@@ -28,24 +28,18 @@ export async function push(ctx: DeviceCtx, raw: unknown): Promise<PushResponse> 
   const incoming = request.changes.map(readChange);
   const receivedAt = ctx.clock();
 
-  const { isRevoked, ...answer } = await withShopWrite(ctx.db, ctx.device.shopId, async (tx) => {
-    const device = await readDevice(tx, ctx.device.id);
+  const pendingCount = Math.min(Math.max(request.pendingCount - incoming.length, 0), largestInteger);
+  const { isRevoked, ...answer } = await withChanges(ctx.db, ctx.device.shopId, async (tx, apply) => {
+    const { stored, isRevoked, epoch } = await readDevice(tx, ctx.device.id);
     const known = await readVerdicts(
       tx,
       incoming.map((one) => one.id),
     );
-    const { fresh, last } = inOrder(incoming, known, device.last);
-    const batch = {
-      source: 'device' as const,
-      deviceId: ctx.device.id,
-      isRevoked: device.isRevoked,
-      receivedAt,
-    };
-    for (const verdict of await applyChanges(tx, batch, fresh)) known.set(verdict.id, verdict);
-    const verdicts = incoming.flatMap((one) => known.get(one.id) ?? []);
-    const pending = Math.min(Math.max(request.pendingCount - incoming.length, 0), largestInteger);
-    await writeDevice(tx, ctx.device.id, last, pending, receivedAt);
-    return { isRevoked: device.isRevoked, epoch: await readEpoch(tx), last, verdicts };
+    const { fresh, last } = inOrder(incoming, known, stored);
+    const device = { id: ctx.device.id, last, pendingCount };
+    const verdicts = await apply({ source: 'device', device, isRevoked, receivedAt }, fresh);
+    for (const verdict of verdicts) known.set(verdict.id, verdict);
+    return { isRevoked, epoch, last, verdicts: incoming.flatMap((one) => known.get(one.id) ?? []) };
   });
   if (isRevoked) throw new AppError('device_revoked', { extra: answer });
   return { ...answer, now: receivedAt.toISOString() };
@@ -72,24 +66,14 @@ function inOrder(
   return { fresh: [...fresh.values()], last };
 }
 
-async function readDevice(tx: ShopTx, id: string): Promise<{ last: number; isRevoked: boolean }> {
-  const { rows } = await tx.client.query<{ last: number; isRevoked: boolean }>(
-    `select last_n as last, revoked_at is not null as "isRevoked" from devices where id = $1`,
+async function readDevice(
+  tx: ShopTx,
+  id: string,
+): Promise<{ stored: number; isRevoked: boolean; epoch: string }> {
+  const { rows } = await tx.client.query<{ stored: number; isRevoked: boolean; epoch: string }>(
+    `select last_n as stored, revoked_at is not null as "isRevoked", ${epochSql} as epoch from devices where id = $1`,
     [id],
   );
   if (!rows[0]) throw new AppError('device_unknown');
   return rows[0];
-}
-
-async function writeDevice(
-  tx: ShopTx,
-  id: string,
-  last: number,
-  pendingCount: number,
-  at: Date,
-): Promise<void> {
-  await tx.client.query(
-    'update devices set last_n = $2, pending_count = $3, last_seen_at = $4 where id = $1',
-    [id, last, pendingCount, at],
-  );
 }

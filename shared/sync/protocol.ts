@@ -4,8 +4,9 @@ import { Id, Instant } from '@/shared/schema/primitives';
 /* The messages between a device and the server. Envelopes are strict; each change is parsed on its own, so that one
  * bad change gets its own verdict; items of the feed are loose, so that fields a later server adds are kept. */
 
-export const Json = z.json();
-export type Json = z.infer<typeof Json>;
+export type Json = string | number | boolean | null | Json[] | { [key: string]: Json };
+/** Any value of JSON. Not walked: it comes out of a JSON parser, and the schema of its record looks at it next. */
+export const Json = z.custom<Json>((value) => value !== undefined);
 export const Fields = z.record(z.string().max(60), Json);
 export type Fields = z.infer<typeof Fields>;
 

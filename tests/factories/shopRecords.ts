@@ -1,5 +1,5 @@
 import { v7 } from 'uuid';
-import type { Bench, Customer, Head, PortDimension, Run, Stage } from '@/shared/schema/records';
+import type { Bench, Customer, Head, PortDimension, Run, Rung, Stage } from '@/shared/schema/records';
 import { newRun } from '@/shared/session/startSession';
 import type { DeskChange } from '@/shared/schema/api';
 import { readingFields, sessionFields } from './records';
@@ -77,6 +77,14 @@ export const benchFields = (word: string): Bench => ({
 export const runFields = (sessionId: string): Run =>
   newRun({ sessionId, runOrdinal: 1, side: 'intake', port: '1', valvesOpenCount: 1 });
 
+export const rungFields = (runId: string): Rung => ({
+  runId,
+  rungOrdinal: 1,
+  liftText: '0.300',
+  liftUnit: 'in',
+  isSkipped: false,
+});
+
 /** A change for the desk. */
 export const deskChange = (
   over: Pick<DeskChange, 'kind' | 'table' | 'rid'> & Partial<DeskChange>,
@@ -119,13 +127,7 @@ export function chainChanges(device: TestDevice, word: string, ids: Chain) {
       sessionFields({ stageId: ids.stage, benchId: ids.bench, label: '1-001', plannedBy: device.by }),
     ),
     create('runs', ids.run, runFields(ids.session)),
-    create('rungs', ids.rung, {
-      runId: ids.run,
-      rungOrdinal: 1,
-      liftText: '0.300',
-      liftUnit: 'in',
-      isSkipped: false,
-    }),
+    create('rungs', ids.rung, rungFields(ids.run)),
     create('readings', ids.reading, reading(device, ids)),
   ];
 }

@@ -116,6 +116,16 @@ export async function signIn(server: TestServer, mail: string, password: string)
   return { token: String(answer.body.accessToken), cookie: cookieOf(answer) };
 }
 
+/** Requests as a person who is signed in. */
+export const asPerson = (server: TestServer, person: Pick<TestPerson, 'token'>) => {
+  const signed = (call: request.Test) => call.set('Authorization', `Bearer ${person.token}`);
+  return {
+    get: (path: string) => signed(request(server.app).get(path)),
+    post: (path: string) => signed(request(server.app).post(path)),
+    put: (path: string) => signed(request(server.app).put(path)),
+  };
+};
+
 /** The refresh cookie that an answer sets, as a browser would send it back. */
 export function cookieOf(answer: request.Response): string {
   const set = answer.get('Set-Cookie')?.[0] ?? '';

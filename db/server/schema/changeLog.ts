@@ -54,7 +54,7 @@ export const changes = pgTable(
     uniqueIndex('changes_shop_seq')
       .on(t.shopId, t.seq)
       .where(sql`${t.seq} is not null`),
-    index('changes_record').on(t.shopId, t.tableName, t.recordId),
+    index('changes_record').on(t.shopId, t.recordId),
   ],
 );
 
@@ -74,10 +74,7 @@ export const disputes = pgTable(
     openedAt: timestamp('opened_at', { withTimezone: true }).notNull().defaultNow(),
     settledAt: timestamp('settled_at', { withTimezone: true }),
   },
-  (t) => [
-    primaryKey({ columns: [t.shopId, t.id] }),
-    index('disputes_record').on(t.shopId, t.tableName, t.recordId),
-  ],
+  (t) => [primaryKey({ columns: [t.shopId, t.id] }), index('disputes_record').on(t.shopId, t.recordId)],
 );
 
 /** Acts that are no change to a synced record: enrolling, revoking, PINs, sign-outs. Append-only by privilege. */

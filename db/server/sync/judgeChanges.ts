@@ -2,9 +2,9 @@ import type { SessionState } from '@/shared/schema/records';
 import { canonical, merge, type GroupDispute, type Guard, type Outcome, type Row } from '@/shared/sync/merge';
 import type { Change, Fields, SeenReading, VerdictOf } from '@/shared/sync/protocol';
 import { isSyncTable, sessionTables, type SyncTable } from '@/shared/sync/syncTables';
-import { fateKey, type Fates } from './fates';
+import { fateKey, type Fates, type Sight } from './look';
 import type { Incoming } from './incoming';
-import { namedBy } from './loadRecords';
+import { namedBy } from './namedBy';
 import type { Records } from './records';
 
 /** One change with its verdict and everything the log keeps of it. */
@@ -19,16 +19,19 @@ export type Judged = {
   old: Fields | null;
 };
 
-export type Standing = Guard['standing'];
-
 /** Judges changes in their order; each meets the records as the one before left them. */
 export function judgeChanges(
   incoming: readonly Incoming[],
-  records: Records,
-  fates: Fates,
+  { records, people, fates }: Sight,
   source: Guard['source'],
-  standingOf: (personId: string) => Standing,
+  isRevoked: boolean,
 ): Judged[] {
+  const standingOf = (personId: string): Guard['standing'] => {
+    const person = people.get(personId);
+    if (!person) return 'unknown_person';
+    if (isRevoked) return 'device_revoked';
+    return person.isClosed ? 'account_closed' : 'open';
+  };
   return incoming.map((one) => {
     if (!one.change) return refused(one);
     const { change } = one;

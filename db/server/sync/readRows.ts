@@ -12,13 +12,20 @@ export async function readRows(
   ids: readonly string[],
 ): Promise<Row[]> {
   if (ids.length === 0) return [];
-  const { rows } = await tx.client.query<StoredRow>(syncedSql[table].readBy(field), [ids]);
+  const { name, columns, columnOf } = syncedSql[table];
+  const { rows } = await tx.client.query<StoredRow>(
+    `select ${columns} from ${name} where ${columnOf(field)} = any($1::uuid[])`,
+    [ids],
+  );
   return rows.map(toRow);
 }
 
 /** Living records of a whole table, in the order they were born. */
 export async function readAll(tx: ShopTx, table: SyncTable): Promise<Row[]> {
-  const { rows } = await tx.client.query<StoredRow>(syncedSql[table].readAll);
+  const { name, columns } = syncedSql[table];
+  const { rows } = await tx.client.query<StoredRow>(
+    `select ${columns} from ${name} where not deleted order by id`,
+  );
   return rows.map(toRow);
 }
 

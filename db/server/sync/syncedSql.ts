@@ -2,21 +2,21 @@ import { getTableColumns, getTableName } from 'drizzle-orm';
 import { syncTableNames, type SyncTable } from '@/shared/sync/syncTables';
 import { syncedPgTables } from '../schema/synced';
 
-/* SQL for the synced tables, written once from the schema: hundreds of rows travel as one JSON parameter, which is
- * faster than a parameter a value. */
+/* SQL for the synced tables, written once from the schema. Hundreds of rows travel as one JSON parameter, which is
+ * faster than a parameter a value, and what belongs together is one statement, because each costs a round trip. */
 
 const common = ['shopId', 'id', 'version', 'deleted', 'seq'];
 
-type TableSql = {
-  /** Rows whose field is one of $1, with their columns under the names of the record's fields. */
-  readBy: (field: string) => string;
-  /** Living rows. */
-  readAll: string;
-  /** $1: rows as JSON */
-  insert: string;
-  update: string;
-  /** $1: after, $2: limit. Columns table, id, version, deleted, seq, fields. */
-  feed: string;
+export type TableSql = {
+  name: string;
+  columnOf: (field: string) => string;
+  /** columns under the names of the record's fields */
+  columns: string;
+  /** one JSON column with the record's fields */
+  fields: string;
+  /** `rows`: placeholder of the rows as JSON; their seq counts from `draw.base` */
+  insert: (rows: string) => string;
+  update: (rows: string) => string;
 };
 
 /** The record's own fields with their columns. */
@@ -29,39 +29,26 @@ export function fieldsOf(table: SyncTable): { field: string; column: string; typ
 function sqlOf(table: SyncTable): TableSql {
   const name = getTableName(syncedPgTables[table]);
   const fields = fieldsOf(table);
-  const record = [
-    'id uuid, version integer, deleted boolean, seq bigint',
-    ...fields.map(({ field, type }) => `"${field}" ${type}`),
-  ].join(', ');
-  const columns = fields.map(({ column }) => column).join(', ');
-  const values = fields.map(({ field }) => `r."${field}"`).join(', ');
-  const assignments = fields.map(({ field, column }) => `${column} = r."${field}"`).join(', ');
-  const pairs = fields.map(({ field, column }) => `'${field}', ${column}`).join(', ');
-  const named = [
-    'id, version, deleted',
-    ...fields.map(({ field, column }) => `${column} as "${field}"`),
-  ].join(', ');
-  const columnOf = (field: string) => fields.find((one) => one.field === field)?.column ?? 'id';
+  const list = (each: (one: (typeof fields)[number]) => string) => fields.map(each).join(', ');
+  const record = `id uuid, version integer, deleted boolean, seq bigint, ${list(({ field, type }) => `"${field}" ${type}`)}`;
   return {
-    readBy: (field) => `select ${named} from ${name} where ${columnOf(field)} = any($1::uuid[])`,
-    readAll: `select ${named} from ${name} where not deleted order by id`,
-    insert: `insert into ${name} (shop_id, id, version, deleted, seq, ${columns})
-             select current_shop(), r.id, r.version, r.deleted, r.seq, ${values}
-             from jsonb_to_recordset($1::jsonb) as r(${record})`,
-    update: `update ${name} t set version = r.version, deleted = r.deleted, seq = r.seq, ${assignments}
-             from jsonb_to_recordset($1::jsonb) as r(${record}) where t.id = r.id`,
-    feed: `(select '${table}' as "table", id, version, deleted, seq, json_build_object(${pairs}) as fields
-            from ${name} where seq > $1::bigint order by seq limit $2::int)`,
+    name,
+    columnOf: (field) => fields.find((one) => one.field === field)?.column ?? 'id',
+    columns: `id, version, deleted, ${list(({ field, column }) => `${column} as "${field}"`)}`,
+    fields: `json_build_object(${list(({ field, column }) => `'${field}', ${column}`)})`,
+    insert: (rows) =>
+      `insert into ${name} (shop_id, id, version, deleted, seq, ${list(({ column }) => column)})
+       select current_shop(), r.id, r.version, r.deleted, draw.base + r.seq, ${list(({ field }) => `r."${field}"`)}
+       from draw, jsonb_to_recordset(${rows}::jsonb) as r(${record})`,
+    update: (rows) =>
+      `update ${name} t set version = r.version, deleted = r.deleted, seq = draw.base + r.seq,
+         ${list(({ field, column }) => `${column} = r."${field}"`)}
+       from draw, jsonb_to_recordset(${rows}::jsonb) as r(${record}) where t.id = r.id`,
   };
 }
 
-/** Statements of each synced table. */
+/** SQL of each synced table. */
 export const syncedSql = Object.fromEntries(syncTableNames.map((table) => [table, sqlOf(table)])) as Record<
   SyncTable,
   TableSql
 >;
-
-/** A page of the feed over all synced tables. $1: after, $2: limit. */
-export const feedSql = `select "table", id, version, deleted, seq::float8 as seq, fields
-  from (${syncTableNames.map((table) => syncedSql[table].feed).join(' union all ')}) as feed
-  order by seq limit $2::int`;
