@@ -67,10 +67,14 @@ async function main() {
   const { env, welcome } = await openHouse(step, { host, port, onCluster: (started) => (cluster = started) });
   await step('web app', ensureWeb);
   const address = `http://${host.includes(':') ? `[${host}]` : host}:${port}`;
-  await step('server', async () => {
-    startServer(env);
-    await untilHealthy(address);
-  });
+  await step(
+    'server',
+    async () => {
+      startServer(env);
+      await untilHealthy(address);
+    },
+    { talks: true },
+  );
   if (welcome.trim()) console.log(welcome.trimEnd());
   say(`ready after ${((Date.now() - begun) / 1000).toFixed(1)} s: ${address}  (Ctrl-C stops it)`);
 }

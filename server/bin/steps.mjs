@@ -12,13 +12,17 @@ export const say = (text) => console.log(`[inchwater] ${text}`);
 const seconds = (since) => `${((Date.now() - since) / 1000).toFixed(1)} s`;
 const dotEveryMs = 10_000;
 
-/** Numbered steps: `await step('PostgreSQL', fn)` prints "[inchwater] 2/7 PostgreSQL … 2.1 s". */
+/**
+ * Numbered steps: `await step('PostgreSQL', fn)` prints "[inchwater] 2/7 PostgreSQL … 2.1 s".
+ * Work that `talks` writes lines of its own: the step's line is ended before it begins.
+ */
 export function numberedSteps(total) {
   let number = 0;
-  return async function step(name, work) {
+  return async function step(name, work, { talks = false } = {}) {
     number += 1;
     const start = Date.now();
-    process.stdout.write(`[inchwater] ${number}/${total} ${name} …`);
+    process.stdout.write(`[inchwater] ${number}/${total} ${name} …${talks ? '\n' : ''}`);
+    if (talks) return work();
     // long work shows that it lives
     const ticking = setInterval(
       () => process.stdout.write(` ${Math.round((Date.now() - start) / 1000)} s …`),
