@@ -1,11 +1,12 @@
-import { Redirect, Slot, useGlobalSearchParams, usePathname, useRouter } from 'expo-router';
+import { Slot, usePathname, useRouter } from 'expo-router';
 import { useEffect, useMemo, useState } from 'react';
 import { AccountSheet } from '@/components/desk/AccountSheet';
 import { DeskFrame } from '@/components/desk/DeskFrame';
-import { placeAfterSignIn, placesAt, signInHref } from '@/components/desk/deskPlaces';
+import { placesAt } from '@/components/desk/deskPlaces';
 import { DeskUnreachable } from '@/components/desk/DeskUnreachable';
 import { KeysSheet } from '@/components/desk/KeysSheet';
 import { SignInForm } from '@/components/desk/SignInForm';
+import { SignInScreen } from '@/components/desk/SignInScreen';
 import { useDeskKeys } from '@/components/desk/useDeskKeys';
 import { Screen } from '@/components/ui/Screen';
 import { Sheet } from '@/components/ui/Sheet';
@@ -26,12 +27,9 @@ export default function DeskLayout() {
   );
 }
 
-/** Lets in who is signed in, and brings everybody else to the sign-in with the address kept. */
+/** Lets in who is signed in; everybody else finds the sign-in at the address they wanted. */
 function Guarded() {
-  const { phase, start } = useDeskStore();
-  const path = usePathname();
-  const { next } = useGlobalSearchParams<{ next?: string }>();
-  const isAtSignIn = path === '/desk/sign-in';
+  const { phase, start, signIn } = useDeskStore();
   useEffect(() => {
     if (phase === 'starting') void start();
   }, [phase, start]);
@@ -43,8 +41,7 @@ function Guarded() {
       </Screen>
     );
   if (phase === 'unreachable') return <DeskUnreachable onTryAgain={() => void start()} />;
-  if (phase === 'signedOut') return isAtSignIn ? <Slot /> : <Redirect href={signInHref(path)} />;
-  return isAtSignIn ? <Redirect href={placeAfterSignIn(next)} /> : <Inside />;
+  return phase === 'signedOut' ? <SignInScreen signIn={signIn} /> : <Inside />;
 }
 
 /** The frame around every desk screen, for somebody who is, or was a moment ago, signed in. */

@@ -117,7 +117,7 @@ function Bar({ places, shopName, personName, onGo, onAccount }: Props) {
       </View>
       <Button
         title={current?.title ?? 'Menu'}
-        label="Menu"
+        label={current ? `${current.title}, menu` : 'Menu'}
         icon="more"
         isExpanded={isOpen}
         onPress={() => setIsOpen(true)}

@@ -9,6 +9,8 @@ import { space } from '@/components/ui/tokens';
 import type { DecimalMark, LiftUnit } from '@/shared/schema/primitives';
 import { liftsBySteps, liftsFromList } from '@/shared/session/liftPlan';
 
+const stepLabels = { from: 'From', to: 'To', step: 'Step' } as const;
+
 type Props = {
   text: string;
   unit: LiftUnit;
@@ -48,14 +50,19 @@ export function LiftPlanField({ text, unit, decimalMark, isChecked, onText, onUn
         {(['from', 'to', 'step'] as const).map((part) => (
           <View key={part} style={{ flexGrow: 1, flexBasis: 90 }}>
             <TextField
-              label={part === 'step' ? 'in steps of' : part}
+              label={stepLabels[part]}
               kind="decimal"
               value={steps[part]}
               onChange={(value) => setSteps({ ...steps, [part]: value })}
             />
           </View>
         ))}
-        <Button title="Fill in" isDisabled={!('lifts' in filled)} onPress={fill} />
+        <Button
+          title="Fill in"
+          isDisabled={!('lifts' in filled)}
+          onPress={fill}
+          style={{ alignSelf: 'flex-end' }}
+        />
       </View>
       {areStepsWritten && 'sentence' in filled ? (
         <AppText variant="small" weight="600" color="redOxide">

@@ -2,6 +2,7 @@ import type { ReactNode } from 'react';
 import { Banner } from '@/components/ui/Banner';
 import { Button } from '@/components/ui/Button';
 import { ErrorState, Progress } from '@/components/ui/States';
+import { AppError } from '@/shared/errors';
 import { problemOf } from './problemOf';
 
 /** What a screen knows about something it asked the server for. */
@@ -21,7 +22,7 @@ export function Loaded<T>({ asked, name, sentences, children }: Props<T>) {
   const { data, error, onTryAgain } = asked;
   if (data === undefined)
     return error ? (
-      <ErrorState {...problemOf(error, sentences)} onTryAgain={onTryAgain} />
+      <ErrorState {...problemOf(error, sentences)} {...(isForGood(error) ? {} : { onTryAgain })} />
     ) : (
       <Progress label={`${name} are being fetched`} />
     );
@@ -40,3 +41,6 @@ export function Loaded<T>({ asked, name, sentences, children }: Props<T>) {
     </>
   );
 }
+
+/** Whether asking again would be answered the same. */
+const isForGood = (error: unknown) => error instanceof AppError && error.again === 'never';

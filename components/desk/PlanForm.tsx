@@ -54,6 +54,14 @@ export function PlanForm({ catalogue, shop, mayAdd, plan, send, onPlanned }: Pro
   const pressureProblem = checkNumber(pressureText);
   const noteProblem = checkNote(note);
 
+  const missing = [
+    ...(stageId ? [] : ['the stage of a head']),
+    ...(benchId ? [] : ['the bench']),
+    ...(pressureProblem ? ['the standard pressure'] : []),
+    ...('sentence' in lifts ? ['the lift plan'] : []),
+    ...(noteProblem ? ['the note'] : []),
+  ];
+
   const chooseCustomer = (id: string) => {
     setCustomerId(id);
     setHeadId(null);
@@ -169,6 +177,9 @@ export function PlanForm({ catalogue, shop, mayAdd, plan, send, onPlanned }: Pro
         onChange={setNote}
         problem={noteProblem}
       />
+      {isChecked && missing.length > 0 ? (
+        <Banner kind="attention" sentence={`Before it can be planned: ${missing.join(', ')}.`} />
+      ) : null}
       {error ? (
         <Banner kind="refusal" sentence={`${problemOf(error).sentence} Nothing was planned.`} />
       ) : null}

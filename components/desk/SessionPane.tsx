@@ -38,7 +38,7 @@ export function SessionPane({ asked, onBack, backHref, onEarlier, onLater }: Pro
         name="Runs and readings"
         sentences={{
           no_such_record:
-            'There is no such session in this shop. It may have been mistyped, or belongs to somebody else.',
+            'There is no such session in this shop. Check the address, or choose a session from the list.',
           not_found: 'That is not the address of a session. Choose one from the list.',
           invalid: 'That is not the address of a session. Choose one from the list.',
           bad_request: 'That is not the address of a session. Choose one from the list.',

@@ -28,7 +28,7 @@ export function ReadingSheet({ row, onClose }: { row: RunTableRow; onClose: () =
         </AppText>
       )}
       <AppText color="quietInk">
-        {`Keyed by ${keyedBy}, ${localTime(reading.at)}. ${markWords[reading.mark]}${notes.length > 0 ? `; ${notes.join(', ')}` : ''}.`}
+        {`Keyed by ${keyedBy}, ${localTime(reading.at)}; ${markWords[reading.mark]}${notes.length > 0 ? `, ${notes.join(', ')}` : ''}.`}
       </AppText>
     </Sheet>
   );

@@ -15,39 +15,49 @@ export function SessionHead({ view }: { view: SessionView }) {
     ['Head', head.casting ? `${head.name} (${head.casting})` : head.name],
     ['Stage', stage.name],
     ['Bench', bench.status === 'inUse' ? bench.name : `${bench.name}: ${benchStanding[bench.status]}`],
-    ['Calibration', calibrationWords(view)],
     ['Standard pressure', `${settings.standardPressureText} ${settings.standardPressureUnit}`],
   ];
+  const longFacts: [string, string][] = [['Calibration', calibrationWords(view)]];
   if (plannedBy) facts.push(['Planned by', plannedBy]);
-  if (session.note) facts.push(['Note', session.note]);
+  if (session.note) longFacts.push(['Note', session.note]);
   return (
     <Card label="What it was measured on" gap="s">
       <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: space.xl, rowGap: space.s }}>
         {facts.map(([name, value]) => (
-          <View key={name} style={{ minWidth: 180, maxWidth: '100%', flexGrow: 1, flexBasis: 200 }}>
-            <AppText variant="small" color="quietInk">
-              {name}
-            </AppText>
-            <AppText weight="600">{value}</AppText>
-          </View>
+          <Fact key={name} name={name} value={value} basisPx={150} />
         ))}
       </View>
+      {longFacts.map(([name, value]) => (
+        <Fact key={name} name={name} value={value} />
+      ))}
     </Card>
+  );
+}
+
+function Fact({ name, value, basisPx }: { name: string; value: string; basisPx?: number }) {
+  return (
+    <View style={basisPx ? { flexGrow: 1, flexBasis: basisPx, maxWidth: '100%' } : {}}>
+      <AppText variant="small" color="quietInk">
+        {name}
+      </AppText>
+      <AppText variant="label">{value}</AppText>
+    </View>
   );
 }
 
 const benchStanding = { needsCheck: 'needs a check', outOfUse: 'out of use' } as const;
 
-/** The grade in each direction that has one; without any, what that means for the figures. */
+/** The grade of each direction in use, said once when both are alike; without any, what that means for the figures. */
 function calibrationWords({ session, runs }: SessionView): string {
-  const { drawing, blowing } = session.settings;
-  const parts: string[] = [];
-  if (drawing) parts.push(`drawing ${gradeWord(drawing.grade)}, factor ${drawing.fit.factorText}`);
-  if (blowing) parts.push(`blowing ${gradeWord(blowing.grade)}, factor ${blowing.fit.factorText}`);
-  if (parts.length === 0) return gradeWord('none');
-  const isMissing = (['drawing', 'blowing'] as const).find(
-    (direction) => !session.settings[direction] && runs.some(({ run }) => run.direction === direction),
+  const used = (['drawing', 'blowing'] as const).filter(
+    (direction) =>
+      session.settings[direction] !== null || runs.some(({ run }) => run.direction === direction),
   );
-  if (isMissing) parts.push(`${isMissing} ${gradeWord('none')}`);
-  return parts.join('; ');
+  const said = used.map((direction) => {
+    const copied = session.settings[direction];
+    return copied ? `${gradeWord(copied.grade)}; factor ${copied.fit.factorText}` : gradeWord('none');
+  });
+  if (said.length === 0) return gradeWord('none');
+  if (said.every((words) => words === said[0])) return `${used.join(' and ')} ${said[0]}`;
+  return used.map((direction, at) => `${direction} ${said[at]}`).join(' · ');
 }

@@ -68,6 +68,7 @@ export function TextField(props: TextFieldProps) {
       >
         <TextInput
           id={id}
+          aria-label={label}
           aria-labelledby={`${id}-label`}
           value={value}
           onChangeText={onChange}
