@@ -36,6 +36,7 @@ export function CaptureScreen(props: CaptureProps) {
       currentRungId={props.currentRungId}
       flowUnit={unitLabel(props.flowUnit)}
       rowHeight={isTablet ? 80 : 64}
+      isCompact={isTablet && layout.columnWidth < 248}
       onGoToRung={(rungId) => {
         setPanel(null);
         props.onGoToRung(rungId);
@@ -47,7 +48,7 @@ export function CaptureScreen(props: CaptureProps) {
   return (
     <View role="main" aria-label={props.runTitle} style={{ flex: 1, backgroundColor: colors.ground }}>
       <StatusStrip facts={props.facts} height={layout.statusHeight} onPress={props.onOpenStatus} />
-      <Frame isScrolling={layout.isScrolling}>
+      <Frame isScrolling={layout.isScrolling} margin={isTablet ? space.l : 0}>
         {isTablet ? (
           <View style={{ width: layout.columnWidth, height: inner, paddingVertical: space.s }}>
             {rungList}
@@ -72,7 +73,7 @@ export function CaptureScreen(props: CaptureProps) {
           </View>
         ) : (
           <>
-            <View style={{ width: layout.contentWidth }}>
+            <View style={{ width: layout.contentWidth, paddingTop: isTablet ? space.s : 0 }}>
               <ReadPart {...parts} />
               <View style={{ flex: 1 }} />
               {isTablet || isLocked ? null : (
@@ -91,12 +92,7 @@ export function CaptureScreen(props: CaptureProps) {
         )}
       </Frame>
       {panel === 'rungs' ? (
-        <Sheet
-          title={props.runTitle}
-          isFullScreen
-          closeTitle="Back to the pad"
-          onClose={() => setPanel(null)}
-        >
+        <Sheet title={props.runTitle} isFullScreen closeTitle="Back" onClose={() => setPanel(null)}>
           {rungList}
         </Sheet>
       ) : null}
@@ -119,8 +115,16 @@ type PartProps = {
   onOpen: (panel: 'rungs' | 'more') => void;
 };
 
-function Frame({ isScrolling, children }: { isScrolling: boolean; children: ReactNode }) {
-  const row = { flexDirection: 'row', justifyContent: 'space-between' } as const;
+function Frame({
+  isScrolling,
+  margin,
+  children,
+}: {
+  isScrolling: boolean;
+  margin: number;
+  children: ReactNode;
+}) {
+  const row = { flexDirection: 'row', justifyContent: 'space-between', paddingRight: margin } as const;
   if (!isScrolling) return <View style={[{ flex: 1, overflow: 'hidden' }, row]}>{children}</View>;
   return <ScrollView contentContainerStyle={row}>{children}</ScrollView>;
 }
@@ -131,7 +135,7 @@ function ReadPart({ layout, props, current, onOpen }: PartProps) {
   const repeats = current?.readings.filter((reading) => reading.isUsed).length ?? 0;
   const place = [
     props.runTitle,
-    current ? `${at} of ${props.rungs.length}` : `${props.rungs.length} lifts`,
+    ...(current ? [`${at} of ${props.rungs.length}`] : []),
     ...(repeats > 0 ? [`repeat ${repeats}`] : []),
   ].join(' · ');
   const isDoubting = props.doubt && props.keypad.flowText === '' && props.keypad.notice === null;
@@ -149,7 +153,7 @@ function ReadPart({ layout, props, current, onOpen }: PartProps) {
         <DoubtStrip
           layout={layout}
           doubt={props.doubt}
-          height={layout.valuesHeight + layout.resultHeight}
+          height={layout.valuesHeight * (layout.arrangement === 'tabletSide' ? 2 : 1) + layout.resultHeight}
           onAnswer={(id) => props.onAnswerDoubt?.(id)}
         />
       ) : (

@@ -27,7 +27,8 @@ export function DoubtStrip({
       style={{
         height,
         justifyContent: 'space-between',
-        padding: space.s,
+        padding: space.xs,
+        paddingHorizontal: space.s,
         borderRadius: radius.key,
         borderWidth: stroke.strong,
         borderStyle: 'dashed',
@@ -37,7 +38,7 @@ export function DoubtStrip({
     >
       <View style={{ flexDirection: 'row', gap: space.s, alignItems: 'center' }}>
         <Icon name="attention" color="brass" size={28} />
-        <AppText size={small} lineHeight={small + 4} weight="600" lines={2} style={{ flex: 1 }}>
+        <AppText size={small} lineHeight={small + 1} weight="600" lines={3} style={{ flex: 1 }}>
           {doubt.sentence}
         </AppText>
       </View>

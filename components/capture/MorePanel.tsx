@@ -30,8 +30,8 @@ export function MorePanel({
   const verbs: Verb[] = [
     {
       icon: 'repeat',
-      title: 'Repeat the last lift',
-      detail: 'One more reading at the lift that was saved last.',
+      title: 'Repeat a lift',
+      detail: 'The lift saved last',
       onPress: then(props.onRepeat),
     },
     ...(lift === null
@@ -40,32 +40,35 @@ export function MorePanel({
           {
             icon: 'skip' as const,
             title: `Skip lift ${lift}`,
-            detail: 'It stays on the column and can be keyed later.',
+            detail: 'It can be keyed later',
             onPress: then(props.onSkip),
           },
         ]),
     {
       icon: 'column',
       title: 'Go to a lift',
-      detail: 'The whole column, every lift to press.',
+      detail: 'Every lift, to press',
       onPress: onOpenRungs,
     },
-    { icon: 'add', title: 'Add a lift', detail: 'One that was not planned.', onPress: then(props.onAddLift) },
+    { icon: 'add', title: 'Add a lift', detail: 'One not in the plan', onPress: then(props.onAddLift) },
     {
       icon: 'check',
       title: 'Finish this run',
-      detail: 'On to the next port. The run can be opened again.',
+      detail: 'On to the next port',
       onPress: then(props.onFinishRun),
     },
     {
       icon: 'door',
       title: 'Leave to the runs',
-      detail: 'Half-keyed digits stay.',
+      detail: 'Half-keyed digits stay',
       onPress: then(props.onLeave),
     },
   ];
   return (
-    <Sheet title="More" isFullScreen closeTitle="Back to the pad" onClose={onClose}>
+    <Sheet title="More" isFullScreen closeTitle="Back" onClose={onClose}>
+      {verbs.map((verb) => (
+        <VerbKey key={verb.title} verb={verb} />
+      ))}
       <View role="group" aria-label="Notes for this reading" style={{ gap: space.s }}>
         <AppText variant="label">Note for this reading</AppText>
         <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.s }}>
@@ -79,9 +82,6 @@ export function MorePanel({
           ))}
         </View>
       </View>
-      {verbs.map((verb) => (
-        <VerbKey key={verb.title} verb={verb} />
-      ))}
     </Sheet>
   );
 }
@@ -97,7 +97,8 @@ function VerbKey({ verb }: { verb: Verb }) {
             flexDirection: 'row',
             alignItems: 'center',
             gap: space.m,
-            padding: space.m,
+            paddingVertical: space.s,
+            paddingHorizontal: space.m,
             borderRadius: radius.key,
             borderWidth: stroke.line,
             borderColor: colors.line,

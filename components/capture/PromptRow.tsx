@@ -71,12 +71,11 @@ function SideKey({
   const { colors } = useTheme();
   const side = layout.control;
   return (
-    <PressArea isKey onPress={onPress}>
+    <PressArea isKey onPress={onPress} style={{ width: side, height: side, paddingVertical: space.hair }}>
       {(isPressed) => (
         <View
           style={{
-            width: side,
-            height: side,
+            flex: 1,
             alignItems: 'center',
             justifyContent: 'center',
             borderRadius: radius.key,

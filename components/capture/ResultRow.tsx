@@ -49,7 +49,7 @@ export function ResultRow({
           role="alert"
           style={{
             flex: 1,
-            height: resultHeight - 4,
+            height: resultHeight - 6,
             flexDirection: 'row',
             alignItems: 'center',
             gap: space.s,
@@ -82,7 +82,7 @@ export function ResultRow({
               {` ${flowUnit}`}
             </AppText>
           </AppText>
-          <AppText size={size.small} lineHeight={size.small + 3} weight="600" color="water" lines={1} isLive>
+          <AppText size={size.small} lineHeight={size.small} weight="600" color="water" lines={1} isLive>
             {result.words}
           </AppText>
         </PressArea>
@@ -92,12 +92,21 @@ export function ResultRow({
         </AppText>
       )}
       {result && canUndo && !isLong ? (
-        <PressArea isKey label="UNDO the last reading" onPress={() => onUndo(result.readingId)}>
+        <PressArea
+          isKey
+          label="UNDO the last reading"
+          onPress={() => onUndo(result.readingId)}
+          style={{
+            width: control === 64 ? 92 : 120,
+            height: control,
+            paddingTop: space.hair,
+            paddingBottom: space.xs,
+          }}
+        >
           {(isPressed) => (
             <View
               style={{
-                width: control === 64 ? 92 : 120,
-                height: control,
+                flex: 1,
                 alignItems: 'center',
                 justifyContent: 'center',
                 borderRadius: radius.key,

@@ -7,6 +7,9 @@ import type { KeypadEvent, KeypadState, Lane } from '@/shared/entry/keypad';
 import type { CaptureLayout } from './captureLayout';
 import { unitLabel } from './captureProps';
 
+/** Line height of a lone number: digits have nothing below the line. */
+const digitHeight = 0.88;
+
 /** Flow and test pressure: the one being keyed is large, the other waits beside it; "same" takes the last pressure. */
 export function ValueBoxes({
   layout,
@@ -25,7 +28,7 @@ export function ValueBoxes({
   const gap = space.xs;
   const isStacked = layout.arrangement === 'tabletSide';
   const same = control;
-  const waiting = control === 64 ? 88 : 132;
+  const waiting = control === 64 ? 88 : 112;
   const active = isStacked ? contentWidth : contentWidth - same - waiting - 2 * gap;
   const box = (lane: Lane) => {
     const isActive = keypad.lane === lane;
@@ -56,7 +59,7 @@ export function ValueBoxes({
       keypadKey="same"
       label="Same pressure as before"
       onEvent={onEvent}
-      cell={{ width: same, height: valuesHeight }}
+      cell={{ width: same, height: valuesHeight, paddingVertical: space.hair }}
     >
       <AppText size={layout.size.small} lineHeight={layout.size.small + 4} weight="600">
         same
@@ -117,7 +120,7 @@ function ValueBox({
   const name = lane === 'flow' ? 'Flow' : 'Test pressure';
   const room = width - 2 * space.s - (isActive ? 6 : 0);
   const fitting = Math.floor(
-    Math.min(size, room / (glyphAdvanceEm * Math.max(1, text.length)), height - small - 8),
+    Math.min(size, room / (glyphAdvanceEm * Math.max(1, text.length)), (height - small - 10) / digitHeight),
   );
   const isWide = width > 180;
   return (
@@ -126,7 +129,7 @@ function ValueBox({
       label={`${name}, ${text === '' ? 'empty' : text} ${unit}${isRepeated ? ', same as before' : ''}`}
       onEvent={onEvent}
       isSelected={isActive}
-      cell={{ width, height }}
+      cell={{ width, height, paddingVertical: space.hair }}
       face={{
         alignItems: 'stretch',
         justifyContent: 'space-between',
@@ -152,7 +155,7 @@ function ValueBox({
       >
         <AppText
           size={fitting}
-          lineHeight={Math.round(fitting * 1.02)}
+          lineHeight={Math.round(fitting * digitHeight)}
           weight={isActive ? '800' : '600'}
           lines={1}
         >

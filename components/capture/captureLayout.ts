@@ -88,6 +88,13 @@ function grow<T extends Record<Heights, number>>(base: T, spare: number, order: 
 
 /** Lays the capture screen out for a window. */
 export function captureLayout(width: number, height: number): CaptureLayout {
+  const layout = arrange(width, height);
+  // the lift is read first: it takes what its row has beside the line under it
+  const prompt = Math.min(72, Math.max(layout.size.prompt, layout.promptHeight - layout.size.small - 10));
+  return { ...layout, size: { ...layout.size, prompt } };
+}
+
+function arrange(width: number, height: number): CaptureLayout {
   if (width >= 700 && height >= 600) return tabletLayout(width, height);
   return width > height && width >= 560 ? phoneSideLayout(width, height) : phoneLayout(width, height);
 }
@@ -150,13 +157,21 @@ function tabletLayout(width: number, height: number): CaptureLayout {
     const columnWidth = Math.min(340, Math.max(232, Math.floor(width * 0.24)));
     const contentWidth = width - padWidth - columnWidth - 3 * 16;
     const least = tablet.statusHeight + padHeight(tablet) + 18 + tablet.saveHeight + tablet.bottom;
-    const grown = grow({ ...tablet, padWidth, columnWidth, contentWidth }, height - least, [
+    const keyed = grow({ ...tablet, padWidth, columnWidth, contentWidth }, height - least, [
       ['keyHeight', 32],
+    ]);
+    // the reading part has the height for itself: flow and pressure under each other, the rest to be read from afar
+    const reading = tablet.promptHeight + 2 * tablet.valuesHeight + 4 + tablet.resultHeight;
+    const spare = height - tablet.statusHeight - reading - 24;
+    const values = Math.min(40, Math.max(0, Math.floor(spare / 4)));
+    const grown = grow({ ...keyed, valuesHeight: keyed.valuesHeight + values }, spare - 2 * values, [
+      ['promptHeight', 40],
+      ['resultHeight', 24],
     ]);
     return { ...grown, arrangement: 'tabletSide', isScrolling: height < least };
   }
-  const contentWidth = Math.min(580, Math.max(padWidth, width - 252));
-  const base = { ...tablet, padWidth, contentWidth, columnWidth: Math.min(340, width - contentWidth - 32) };
+  const contentWidth = Math.min(560, Math.max(padWidth, width - 300));
+  const base = { ...tablet, padWidth, contentWidth, columnWidth: Math.min(340, width - contentWidth - 48) };
   const least = stackHeight(base);
   return { ...grow(base, height - least, order), arrangement: 'tablet', isScrolling: height < least };
 }

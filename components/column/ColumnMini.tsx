@@ -5,10 +5,10 @@ import { RungMark } from './RungMark';
 import { columnLabel, rungState, waterLevel, type ColumnRung } from './rungState';
 
 /** The column laid down small, for a line in a list: lowest lift at the left. */
-export function ColumnMini({ rungs, width = 144 }: { rungs: ColumnRung[]; width?: number }) {
+export function ColumnMini({ rungs, width = 184 }: { rungs: ColumnRung[]; width?: number }) {
   const { colors } = useTheme();
   const height = 18;
-  const step = Math.min(16, (width - 4) / Math.max(1, rungs.length));
+  const step = Math.min(18, (width - 4) / Math.max(1, rungs.length));
   const length = step * rungs.length;
   const wet = waterLevel(rungs) * step;
   return (
@@ -29,16 +29,16 @@ export function ColumnMini({ rungs, width = 144 }: { rungs: ColumnRung[]; width?
           if (!state.mark) {
             return <Path key={rung.id} d={`M${x} 6V12`} stroke={colors.line} strokeWidth={1.5} />;
           }
-          const size = Math.max(3, Math.min(9, step - 5));
+          const size = Math.max(3, Math.min(8, step - 6));
           return (
             <RungMark
               key={rung.id}
               mark={state.mark}
               hasDoubt={state.hasDoubt}
               x={x - size / 2}
-              y={4}
+              y={5}
               width={size}
-              height={10}
+              height={8}
             />
           );
         })}

@@ -14,13 +14,22 @@ export type RungListProps = {
   currentRungId?: string | null;
   flowUnit: string;
   rowHeight?: number;
+  /** too narrow for units beside the figures; they stay in the spoken label */
+  isCompact?: boolean;
   onGoToRung: (rungId: string) => void;
 };
 
 const tubeWidth = 36;
 
 /** The column at full size: every rung can be pressed. Opens on the rung that is being keyed. */
-export function RungList({ rungs, currentRungId, flowUnit, rowHeight = 64, onGoToRung }: RungListProps) {
+export function RungList({
+  rungs,
+  currentRungId,
+  flowUnit,
+  rowHeight = 64,
+  isCompact = false,
+  onGoToRung,
+}: RungListProps) {
   const scroller = useRef<ScrollView>(null);
   const level = waterLevel(rungs);
   const fromTop = rungs.length - 1 - rungs.findIndex((rung) => rung.id === currentRungId);
@@ -39,6 +48,7 @@ export function RungList({ rungs, currentRungId, flowUnit, rowHeight = 64, onGoT
             isBottom={at === 0}
             isCurrent={rung.id === currentRungId}
             flowUnit={flowUnit}
+            isCompact={isCompact}
             height={rowHeight}
             onPress={() => onGoToRung(rung.id)}
           />
@@ -55,6 +65,7 @@ type RungRowProps = {
   isBottom: boolean;
   isCurrent: boolean;
   flowUnit: string;
+  isCompact: boolean;
   height: number;
   onPress: () => void;
 };
@@ -66,6 +77,7 @@ function RungRow({
   isBottom,
   isCurrent,
   flowUnit,
+  isCompact,
   height,
   onPress,
 }: RungRowProps) {
@@ -109,10 +121,10 @@ function RungRow({
                 weight={isCurrent ? '800' : '600'}
                 color={isCurrent ? 'markingBlue' : 'ink'}
               >
-                {lift}
+                {isCompact ? rung.liftText : lift}
               </AppText>
               {figure ? (
-                <AppText size={isTablet ? 28 : 26} lineHeight={30} weight="800">
+                <AppText size={26} lineHeight={30} weight="800">
                   {figure}
                 </AppText>
               ) : null}
@@ -134,7 +146,7 @@ function TubeSegment({
   isBottom,
   isCurrent,
   height,
-}: Omit<RungRowProps, 'flowUnit' | 'onPress'>) {
+}: Omit<RungRowProps, 'flowUnit' | 'isCompact' | 'onPress'>) {
   const { colors } = useTheme();
   const state = rungState(rung);
   const [left, right, centre] = [6, tubeWidth - 6, tubeWidth / 2];

@@ -63,7 +63,7 @@ export function rungWords(rung: ColumnRung): string {
   if (state.kind !== 'saved' || !state.mark) return state.kind === 'skipped' ? 'skipped' : 'not yet';
   return [
     markWords[state.mark],
-    ...(state.hasDoubt ? ['doubt kept'] : []),
+    ...(state.hasDoubt ? ['doubt'] : []),
     ...(state.usedCount > 1 ? [`${state.usedCount} readings`] : []),
   ].join(', ');
 }

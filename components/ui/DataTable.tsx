@@ -5,7 +5,7 @@ import { Icon } from './Icon';
 import { alignDecimals } from './alignDecimals';
 import { useTheme } from './ThemeProvider';
 import { PressArea } from './PressArea';
-import { space, stroke } from './tokens';
+import { glyphAdvanceEm, space, stroke, textSizes } from './tokens';
 import { webProps } from './webProps';
 
 export type DataColumn<Row> = {
@@ -44,17 +44,25 @@ export type DataTableProps<Row> = {
 /** A table of the desk. Arrow keys walk the rows, Enter opens one, the header stays while rows scroll under it. */
 export function DataTable<Row>(props: DataTableProps<Row>) {
   const { label, columns, rows, rowId, selectedId, onOpenRow, sort, onSort, isRoomy = false } = props;
-  const { colors } = useTheme();
+  const { colors, place } = useTheme();
   const [focusedAt, setFocusedAt] = useState(0);
   const aligned = new Map(
     columns
       .filter((column) => column.kind === 'decimal')
       .map((column) => [column.id, alignDecimals(rows.map(column.text))]),
   );
-  const minWidth = columns.reduce((sum, column) => sum + (column.minWidth ?? 80), 0);
+  const glyph = textSizes[place].data * glyphAdvanceEm;
+  /** Widths come from the letters, all of one width: no cell runs into the next, whatever the window. */
+  const leastOf = (column: DataColumn<Row>) => {
+    const header =
+      column.header.length + (column.unit ? column.unit.length + 1 : 0) + (column.isSortable ? 2 : 0);
+    const longest = Math.max(header, ...rows.map((row) => Math.min(28, column.text(row).length)));
+    return column.minWidth ?? Math.ceil(longest * glyph) + 2 * space.s;
+  };
+  const minWidth = columns.reduce((sum, column) => sum + leastOf(column), 4);
   const cellStyle = (column: DataColumn<Row>) => ({
     flex: column.flex ?? 1,
-    minWidth: column.minWidth ?? 80,
+    minWidth: leastOf(column),
     paddingHorizontal: space.s,
     justifyContent: 'center' as const,
     alignItems: column.kind === 'decimal' ? ('flex-end' as const) : ('flex-start' as const),
@@ -84,8 +92,10 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
             style={{
               flexDirection: 'row',
               minHeight: 40,
+              borderLeftWidth: 4,
+              borderLeftColor: 'transparent',
               borderBottomWidth: stroke.strong,
-              borderColor: colors.line,
+              borderBottomColor: colors.line,
             }}
           >
             {columns.map((column) => (

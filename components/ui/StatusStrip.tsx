@@ -1,4 +1,4 @@
-import { View } from 'react-native';
+import { View, useWindowDimensions } from 'react-native';
 import { AppText } from './AppText';
 import { Icon } from './Icon';
 import { PressArea } from './PressArea';
@@ -10,6 +10,8 @@ export type StatusFacts = {
   who: string;
   /** where the readings are: "14 saved on this device", "all sent 10:42" */
   where: string;
+  /** the same in fewer letters, for a narrow screen: "14 on device" */
+  whereShort?: string;
   /** the oldest unsent one is over a day old; `where` then says its age */
   isOld?: boolean;
   /** how many things wait for a person */
@@ -29,6 +31,10 @@ export function StatusStrip({
   const { colors, place, isTablet } = useTheme();
   const size = place === 'desk' ? 15 : isTablet ? 22 : 20;
   const { who, where, isOld = false, needsPersonCount: count } = facts;
+  const { width } = useWindowDimensions();
+  // letters that fit beside the name, the mark of age and the count
+  const room = (width - 2 * space.s - (count > 0 ? size * 3 : 0) - (isOld ? size + 4 : 0)) / (size * 0.6);
+  const shown = who.length + 1 + where.length > room ? (facts.whereShort ?? where) : where;
   return (
     <PressArea
       onPress={onPress}
@@ -63,7 +69,7 @@ export function StatusStrip({
               lines={1}
               style={{ flexShrink: 1 }}
             >
-              {where}
+              {shown}
             </AppText>
           </View>
           {count > 0 ? (

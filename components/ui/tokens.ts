@@ -59,7 +59,7 @@ export type TextVariant = 'display' | 'title' | 'heading' | 'body' | 'label' | '
 
 /** Text sizes in px by place. The bench never goes under 20; the desk is a scale of 1.25 from 16. */
 export const textSizes: Record<Place, Record<TextVariant, number>> = {
-  bench: { display: 48, title: 28, heading: 24, body: 20, label: 20, small: 20, data: 24 },
+  bench: { display: 48, title: 28, heading: 24, body: 20, label: 20, small: 20, data: 20 },
   desk: { display: 39, title: 25, heading: 20, body: 16, label: 15, small: 14, data: 15 },
 };
 export const lineHeightRatio: Record<TextVariant, number> = {
