@@ -1,4 +1,4 @@
-import { Redirect, Slot, usePathname, useRouter, useSegments } from 'expo-router';
+import { Navigator, Redirect, Slot, usePathname, useRouter, useSegments } from 'expo-router';
 import { useEffect } from 'react';
 import { View } from 'react-native';
 import { BenchFailed, BenchOpening, BenchOtherTab } from '@/components/bench/BenchClosed';
@@ -18,7 +18,11 @@ export default function BenchLayout() {
   useEffect(() => void open(), [open]);
   return (
     <ThemeProvider place="bench" choice={theme}>
-      <BenchDoor />
+      {/* the navigator stays while what stands before it changes: one that comes and goes while an address is being
+          changed chases its own state for ever */}
+      <Navigator>
+        <BenchDoor />
+      </Navigator>
     </ThemeProvider>
   );
 }

@@ -97,21 +97,24 @@ function PinEntry({
       onBack={onBack}
       backLabel="Back to the names"
     >
-      <View style={{ alignItems: 'center', gap: space.m }}>
+      <View style={{ alignItems: 'center', gap: space.s }}>
         <PinDots count={pin.length} />
-        {isWaiting ? (
-          <Banner
-            kind="attention"
-            word="Wait"
-            sentence={`Too many tries. Key it again in ${waitSeconds} s. What is saved stays saved.`}
-          />
-        ) : problem ? (
-          <Banner kind="refusal" word="Not in" sentence={problem} />
-        ) : isBusy ? (
-          <AppText isLive color="quietInk">
-            Looking …
-          </AppText>
-        ) : null}
+        {/* room that is always there: the keys must not move under a thumb when a sentence comes */}
+        <View style={{ minHeight: 128, justifyContent: 'center', alignSelf: 'stretch' }}>
+          {isWaiting ? (
+            <Banner
+              kind="attention"
+              word="Wait"
+              sentence={`Too many tries. Key it again in ${waitSeconds} s.`}
+            />
+          ) : problem ? (
+            <Banner kind="refusal" word="Not in" sentence={problem} />
+          ) : isBusy ? (
+            <AppText isLive color="quietInk" align="center">
+              Looking …
+            </AppText>
+          ) : null}
+        </View>
         <PinPad pin={pin} isDisabled={isBusy || isWaiting} onChange={(next) => void change(next)} />
       </View>
     </Screen>

@@ -54,7 +54,7 @@ export function BenchLiftPlan({
               ['lastText', 'Last'],
             ] as const
           ).map(([name, label]) => (
-            <View key={name} style={{ flexGrow: 1, flexBasis: 96 }}>
+            <View key={name} style={{ flexGrow: 1, flexBasis: 80 }}>
               <TextField
                 label={label}
                 kind="decimal"

@@ -77,6 +77,7 @@ function readHead(form: NewSessionForm, name: string, problems: FormProblems): N
     if (value < 1 || value > most) problems[field] = `A whole number from 1 to ${most}.`;
     return value;
   };
+  const cylinderCount = count('cylindersText', 24);
   if (form.casting.trim().length > 120) problems.casting = 'That is too long: 120 letters at most.';
   const ports = (side: PortName['side'], field: 'intakePortsText' | 'exhaustPortsText'): PortName[] => {
     const names = (form[field] ?? numberedPorts(form.cylindersText))
@@ -96,7 +97,7 @@ function readHead(form: NewSessionForm, name: string, problems: FormProblems): N
   return {
     name,
     casting: form.casting.trim(),
-    cylinderCount: count('cylindersText', 24),
+    cylinderCount,
     intakeValveCount: count('intakeValvesText', 6),
     exhaustValveCount: count('exhaustValvesText', 6),
     ports: all,
