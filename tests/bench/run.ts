@@ -1,9 +1,15 @@
 import { startTestCluster } from '../factories/testCluster.mjs';
 import { pushBench } from './pushBench';
+import { saveBench } from './saveBench';
+import { sizeBench } from './sizeBench';
 
 /* npm run bench [name …]: speed as ratios, each against its baseline in the same run on the same machine. */
 
-const benches: Record<string, () => Promise<void>> = { push: pushBench };
+const benches: Record<string, () => Promise<void>> = {
+  save: saveBench,
+  size: sizeBench,
+  push: pushBench,
+};
 
 async function main(): Promise<void> {
   const wanted = process.argv.slice(2);
