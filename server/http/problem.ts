@@ -14,11 +14,11 @@ const codeOfType: Record<string, ErrorCode> = {
 export function appErrorOf(error: unknown): AppError {
   if (error instanceof AppError) return error;
   if (isPassingTrouble(error)) return new AppError('busy');
-  const given: Record<string, unknown> = typeof error === 'object' && error !== null ? { ...error } : {};
-  const code = typeof given.type === 'string' ? codeOfType[given.type] : undefined;
+  const { type, status } = (typeof error === 'object' ? (error ?? {}) : {}) as Record<string, unknown>;
+  const code = typeof type === 'string' ? codeOfType[type] : undefined;
   if (code) return new AppError(code);
-  const status = Number(given.status);
-  return new AppError(status >= 400 && status < 500 ? 'bad_request' : 'internal');
+  const isTheirs = Number(status) >= 400 && Number(status) < 500;
+  return new AppError(isTheirs ? 'bad_request' : 'internal');
 }
 
 /** Sends a refusal as problem details (RFC 9457) with its code. */

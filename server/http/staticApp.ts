@@ -30,7 +30,7 @@ export function serveStaticApp(app: Express, dist: string): void {
 function appAddress(dist: string): RequestHandler {
   const index = path.join(dist, 'index.html');
   return (request, response, next) => {
-    const isScreen = ['GET', 'HEAD'].includes(request.method) && path.extname(request.path) === '';
+    const isScreen = ['GET', 'HEAD'].includes(request.method) && !/\.[^/]*$/.test(request.path);
     if (!isScreen || !request.accepts('html') || !fs.existsSync(index)) return next();
     response.setHeader('Cache-Control', 'no-cache');
     response.sendFile(index, { dotfiles: 'allow' });
