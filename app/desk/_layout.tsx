@@ -1,5 +1,6 @@
 import { Slot, usePathname, useRouter } from 'expo-router';
 import { useEffect, useMemo, useState } from 'react';
+import { View } from 'react-native';
 import { AccountSheet } from '@/components/desk/AccountSheet';
 import { DeskFrame } from '@/components/desk/DeskFrame';
 import { placesAt } from '@/components/desk/deskPlaces';
@@ -15,7 +16,7 @@ import { ThemeProvider } from '@/components/ui/ThemeProvider';
 import { useDeskStore } from '@/stores/desk/deskStore';
 import { useNewsStore } from '@/stores/desk/newsStore';
 import { usePreferencesStore } from '@/stores/desk/preferencesStore';
-import { useMay } from '@/stores/desk/useMay';
+import { useIsInside, useMay } from '@/stores/desk/useMay';
 import { useDeskNews } from '@/stores/queries/deskQueries';
 
 export default function DeskLayout() {
@@ -27,21 +28,32 @@ export default function DeskLayout() {
   );
 }
 
-/** Lets in who is signed in; everybody else finds the sign-in at the address they wanted. */
+/** Lets in who is signed in; everybody else finds the sign-in at the address they wanted. The routes are mounted all the
+ * same, drawing nothing: without them the router would forget that address.
+ */
 function Guarded() {
   const { phase, start, signIn } = useDeskStore();
+  const isInside = useIsInside();
   useEffect(() => {
     if (phase === 'starting') void start();
   }, [phase, start]);
-
-  if (phase === 'starting')
-    return (
-      <Screen title="Desk" width="narrow">
-        <Progress label="The desk opens" />
-      </Screen>
-    );
-  if (phase === 'unreachable') return <DeskUnreachable onTryAgain={() => void start()} />;
-  return phase === 'signedOut' ? <SignInScreen signIn={signIn} /> : <Inside />;
+  if (isInside) return <Inside />;
+  return (
+    <>
+      <View style={{ display: 'none' }}>
+        <Slot />
+      </View>
+      {phase === 'unreachable' ? (
+        <DeskUnreachable onTryAgain={() => void start()} />
+      ) : phase === 'starting' ? (
+        <Screen title="Desk" width="narrow">
+          <Progress label="The desk opens" />
+        </Screen>
+      ) : (
+        <SignInScreen signIn={signIn} />
+      )}
+    </>
+  );
 }
 
 /** The frame around every desk screen, for somebody who is, or was a moment ago, signed in. */

@@ -103,6 +103,7 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
                 key={column.id}
                 title={column.header}
                 unit={column.unit}
+                isRight={column.kind === 'decimal'}
                 style={cellStyle(column)}
                 sorted={
                   sort?.columnId === column.id ? (sort.isDescending ? 'descending' : 'ascending') : 'none'
@@ -172,18 +173,20 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
 function HeaderCell({
   title,
   unit,
+  isRight,
   style,
   sorted,
   onPress,
 }: {
   title: string;
   unit?: string;
+  isRight: boolean;
   style: object;
   sorted: 'ascending' | 'descending' | 'none';
   onPress?: () => void;
 }) {
   const text = (
-    <AppText variant="label" color="quietInk">
+    <AppText variant="label" color="quietInk" align={isRight ? 'right' : 'left'}>
       {title}
       {unit ? <AppText variant="small" color="quietInk">{` ${unit}`}</AppText> : null}
     </AppText>

@@ -23,12 +23,15 @@ export function listenToDesk({ onPoke, onLive }: Listener): () => void {
   const channel = openTabChannel('inchwater-desk-news');
   let heardAt = 0;
   let isLive = false;
+  let isDown = false;
   const live = (next: boolean) => {
     if (next !== isLive) onLive(next);
     isLive = next;
   };
   const hear = (word: unknown) => {
-    if (word === 'down') return live(false);
+    isDown = word === 'down';
+    // a stream that ends is mostly a token that ran out: only one that stays away is said
+    if (isDown) return;
     heardAt = Date.now();
     live(true);
     if (word === 'poke') onPoke();
@@ -40,7 +43,7 @@ export function listenToDesk({ onPoke, onLive }: Listener): () => void {
   };
 
   const poll = setInterval(() => {
-    if (Date.now() - heardAt > silenceMs) live(false);
+    if (isDown || Date.now() - heardAt > silenceMs) live(false);
     if (!isLive && document.visibilityState === 'visible') onPoke();
   }, pollMs);
   const onBack = () => document.visibilityState === 'visible' && onPoke();

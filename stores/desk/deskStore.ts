@@ -53,7 +53,7 @@ export const useDeskStore = create<DeskState>()((set, get) => {
   };
   const leave = (phase: 'ended' | 'signedOut') => {
     clearTimeout(timer);
-    set(phase === 'ended' ? { phase } : { phase, signedIn: null });
+    set(phase === 'ended' ? { phase } : { phase, signedIn: null, personOrdinal: get().personOrdinal + 1 });
   };
   const refresh = (): Promise<SignedIn> => {
     refreshing ??= withTabLock('inchwater-desk-refresh', askRefresh)

@@ -129,4 +129,6 @@ export function useDeskNews(): void {
       onLive: setLive,
     });
   }, [client, isSignedIn, person, setLive]);
+  // who left leaves nothing behind in the page's memory
+  useEffect(() => () => client.removeQueries({ queryKey: ['desk', person] }), [client, person]);
 }

@@ -7,11 +7,15 @@ import { neighboursOf, sessionHref, sessionsToShow, stateFilterOf } from '@/comp
 import { useDeskKeys } from '@/components/desk/useDeskKeys';
 import { Screen } from '@/components/ui/Screen';
 import { usePreferencesStore } from '@/stores/desk/preferencesStore';
-import { useMay } from '@/stores/desk/useMay';
+import { useIsInside, useMay } from '@/stores/desk/useMay';
 import { useSessions } from '@/stores/queries/deskQueries';
 
-/** List and session side by side, or one of them at a time. The address is the selection and the filter. */
 export default function SessionsLayout() {
+  return useIsInside() ? <Panes /> : <Slot />;
+}
+
+/** List and session side by side, or one of them at a time. The address is the selection and the filter. */
+function Panes() {
   const isWide = useIsWide();
   const router = useRouter();
   const { sessionId = null, ...params } = useGlobalSearchParams<{

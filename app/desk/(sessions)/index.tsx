@@ -1,7 +1,10 @@
 import { Screen } from '@/components/ui/Screen';
 import { EmptyState } from '@/components/ui/States';
+import { useIsInside } from '@/stores/desk/useMay';
 
 export default function SessionsRoute() {
+  const isInside = useIsInside();
+  if (!isInside) return null;
   return (
     <Screen title="Sessions">
       <EmptyState

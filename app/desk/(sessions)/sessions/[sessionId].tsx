@@ -2,6 +2,7 @@ import { useGlobalSearchParams, useLocalSearchParams, useRouter } from 'expo-rou
 import { useIsWide } from '@/components/desk/DeskFrame';
 import { SessionPane } from '@/components/desk/SessionPane';
 import { neighboursOf, sessionHref, sessionsToShow, stateFilterOf } from '@/components/desk/sessionOrder';
+import { useIsInside } from '@/stores/desk/useMay';
 import { useSession, useSessions } from '@/stores/queries/deskQueries';
 
 export default function SessionRoute() {
@@ -9,12 +10,14 @@ export default function SessionRoute() {
   const params = useGlobalSearchParams<{ state?: string; find?: string }>();
   const router = useRouter();
   const isWide = useIsWide();
+  const isInside = useIsInside();
   const filter = { state: stateFilterOf(params.state), text: params.find ?? '' };
   const { data, error, refetch } = useSession(sessionId);
   const sessions = useSessions();
   const shown = sessionsToShow(sessions.data?.sessions ?? [], filter);
   const { earlierId, laterId } = neighboursOf(shown, sessionId);
   const goTo = (id: string | null) => (id ? () => router.push(sessionHref(id, filter)) : null);
+  if (!isInside) return null;
   return (
     <SessionPane
       key={sessionId}
