@@ -26,7 +26,10 @@ export async function callApi<T>(request: ApiRequest<T>): Promise<T> {
     const response = await send(request, 'application/json', signal);
     if (!response.ok) throw await problemOf(response);
     if (request.schema === null) return undefined as T;
-    const parsed = request.schema.safeParse(await readJson(response));
+    const body = await readJson(response);
+    // a Wi-Fi's sign-in page answers 200 with a page of its own: that is no answer of ours
+    if (body === undefined) throw new AppError('offline');
+    const parsed = request.schema.safeParse(body);
     // an answer this version cannot read: an older page against a newer server
     if (!parsed.success) throw new AppError('update_needed');
     return parsed.data;
@@ -99,13 +102,13 @@ function send<T>(request: ApiRequest<T>, accept: string, signal: AbortSignal): P
   });
 }
 
-/** The body as JSON; null when it is none. */
+/** The body as JSON; undefined when it is none. */
 async function readJson(response: Response): Promise<unknown> {
   const text = await response.text();
   try {
     return JSON.parse(text);
   } catch {
-    return null;
+    return undefined;
   }
 }
 

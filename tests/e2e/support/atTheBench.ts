@@ -45,3 +45,8 @@ export async function keyReading(page: Page, flow: string, pressure: string): Pr
   await page.getByRole('button', { name: 'SAVE', exact: true }).click();
   await page.getByText('Saved on this device').first().waitFor();
 }
+
+/** Waits until a lift stands on the screen as the one to set. */
+export async function atLift(page: Page, lift: string): Promise<void> {
+  await page.getByText(lift, { exact: true }).first().waitFor();
+}
