@@ -35,12 +35,8 @@ export function PromptRow({
       }}
     >
       {onOpenRungs ? <SideKey icon="column" word="lifts" layout={layout} onPress={onOpenRungs} /> : null}
-      <View
-        role="status"
-        aria-label={`${liftText === null ? 'Every lift is done' : `Lift ${liftText} ${liftUnit}`}, ${place}`}
-        style={{ flex: 1, minWidth: 0, alignItems: onOpenRungs ? 'center' : 'flex-start' }}
-      >
-        <AppText size={size.prompt} lineHeight={size.prompt + 2} weight="800" lines={1}>
+      <View style={{ flex: 1, minWidth: 0, alignItems: onOpenRungs ? 'center' : 'flex-start' }}>
+        <AppText size={size.prompt} lineHeight={size.prompt + 2} weight="800" lines={1} isLive>
           {liftText ?? 'All done'}
           {liftText === null ? null : (
             <AppText size={control === 64 ? 24 : 28} weight="600" color="quietInk">
@@ -48,7 +44,14 @@ export function PromptRow({
             </AppText>
           )}
         </AppText>
-        <AppText size={size.small} lineHeight={size.small + 4} color="quietInk" lines={1}>
+        <AppText
+          size={size.small}
+          lineHeight={size.small + 4}
+          color="quietInk"
+          weight="400"
+          level={1}
+          lines={1}
+        >
           {place}
         </AppText>
       </View>

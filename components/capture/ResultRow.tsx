@@ -3,6 +3,7 @@ import { View } from 'react-native';
 import { AppText } from '@/components/ui/AppText';
 import { Icon } from '@/components/ui/Icon';
 import { PressArea } from '@/components/ui/PressArea';
+import { Spoken } from '@/components/ui/Spoken';
 import { useTheme } from '@/components/ui/ThemeProvider';
 import { radius, space, stroke } from '@/components/ui/tokens';
 import type { KeypadNotice } from '@/shared/entry/keypadNotice';
@@ -44,6 +45,7 @@ export function ResultRow({
   const isLong = notice?.code === 'notSaved';
   return (
     <View style={{ height: resultHeight, flexDirection: 'row', alignItems: 'center', gap: space.s }}>
+      <Spoken isLive>{result ? `${result.words}. ${result.correctedText ?? ''} ${flowUnit}` : ''}</Spoken>
       {notice ? (
         <View
           role="alert"
@@ -73,7 +75,6 @@ export function ResultRow({
         <PressArea
           isKey
           onPress={() => onOpenWorking(result.readingId)}
-          label={`Corrected flow ${result.correctedText ?? 'not known'} ${flowUnit} at ${standardPressure}. Open the working`}
           style={{ flex: 1, minWidth: 0, height: resultHeight, justifyContent: 'center' }}
         >
           <AppText size={size.figure} lineHeight={size.figure - 8} weight="800" lines={1}>
@@ -82,9 +83,10 @@ export function ResultRow({
               {` ${flowUnit}`}
             </AppText>
           </AppText>
-          <AppText size={size.small} lineHeight={size.small} weight="600" color="water" lines={1} isLive>
+          <AppText size={size.small} lineHeight={size.small} weight="600" color="water" lines={1}>
             {result.words}
           </AppText>
+          <Spoken>{`corrected to ${standardPressure}. Open the working`}</Spoken>
         </PressArea>
       ) : (
         <AppText size={size.small} color="quietInk" style={{ flex: 1 }} lines={2}>

@@ -40,7 +40,7 @@ export function SaveKey({
           color={isNext ? 'markingBlue' : 'onMarkingBlue'}
           style={{ letterSpacing: isNext ? 0 : 2, opacity: isPressed ? 0.8 : 1 }}
         >
-          {isNext ? 'TO PRESSURE' : 'SAVE'}
+          {isNext ? 'TO THE PRESSURE' : 'SAVE'}
         </AppText>
       )}
     </BenchKey>

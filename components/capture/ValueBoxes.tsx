@@ -1,6 +1,7 @@
 import { View } from 'react-native';
 import { BenchKey } from '@/components/keypad/BenchKey';
 import { AppText } from '@/components/ui/AppText';
+import { Spoken } from '@/components/ui/Spoken';
 import { useTheme } from '@/components/ui/ThemeProvider';
 import { glyphAdvanceEm, space, stroke } from '@/components/ui/tokens';
 import type { KeypadEvent, KeypadState, Lane } from '@/shared/entry/keypad';
@@ -57,7 +58,6 @@ export function ValueBoxes({
   const sameKey = (
     <BenchKey
       keypadKey="same"
-      label="Same pressure as before"
       onEvent={onEvent}
       cell={{ width: same, height: valuesHeight, paddingVertical: space.hair }}
     >
@@ -71,6 +71,7 @@ export function ValueBoxes({
       >
         {keypad.lastPressureText ?? '–'}
       </AppText>
+      <Spoken>pressure as before</Spoken>
     </BenchKey>
   );
   if (isStacked) {
@@ -117,7 +118,6 @@ function ValueBox({
   onEvent: (event: KeypadEvent) => void;
 }) {
   const { colors } = useTheme();
-  const name = lane === 'flow' ? 'Flow' : 'Test pressure';
   const room = width - 2 * space.s - (isActive ? 6 : 0);
   const fitting = Math.floor(
     Math.min(size, room / (glyphAdvanceEm * Math.max(1, text.length)), (height - small - 10) / digitHeight),
@@ -126,7 +126,6 @@ function ValueBox({
   return (
     <BenchKey
       keypadKey={lane}
-      label={`${name}, ${text === '' ? 'empty' : text} ${unit}${isRepeated ? ', same as before' : ''}`}
       onEvent={onEvent}
       isSelected={isActive}
       cell={{ width, height, paddingVertical: space.hair }}
@@ -140,6 +139,7 @@ function ValueBox({
         borderColor: isActive ? colors.markingBlue : colors.line,
       }}
     >
+      {isWide ? null : <Spoken>{lane}</Spoken>}
       <AppText
         size={small}
         lineHeight={small + 3}
@@ -171,6 +171,8 @@ function ValueBox({
           />
         ) : null}
       </View>
+      {text === '' ? <Spoken>empty</Spoken> : null}
+      {isRepeated && !isWide ? <Spoken>same as before</Spoken> : null}
     </BenchKey>
   );
 }

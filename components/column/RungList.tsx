@@ -3,6 +3,7 @@ import { ScrollView, View } from 'react-native';
 import Svg, { Path } from 'react-native-svg';
 import { AppText } from '@/components/ui/AppText';
 import { PressArea } from '@/components/ui/PressArea';
+import { Spoken } from '@/components/ui/Spoken';
 import { useTheme } from '@/components/ui/ThemeProvider';
 import { space, stroke } from '@/components/ui/tokens';
 import { CurrentMark, RungMark } from './RungMark';
@@ -88,11 +89,7 @@ function RungRow({
   const words = isCurrent && state.kind === 'empty' ? 'keying now' : rungWords(rung);
   const small = isTablet ? 22 : 20;
   return (
-    <PressArea
-      onPress={onPress}
-      label={`Lift ${lift}, ${figure ? `${figure} ${flowUnit}, ` : ''}${words}${isCurrent ? ', being keyed' : ''}`}
-      web={{ 'aria-current': isCurrent ? 'step' : undefined }}
-    >
+    <PressArea onPress={onPress} web={{ 'aria-current': isCurrent ? 'step' : undefined }}>
       {(isPressed) => (
         <View
           style={{
@@ -123,9 +120,11 @@ function RungRow({
               >
                 {isCompact ? rung.liftText : lift}
               </AppText>
+              {isCompact ? <Spoken>{rung.liftUnit}</Spoken> : null}
               {figure ? (
                 <AppText size={26} lineHeight={30} weight="800">
                   {figure}
+                  <Spoken>{` ${flowUnit}`}</Spoken>
                 </AppText>
               ) : null}
             </View>

@@ -7,7 +7,8 @@ import type { KeypadEvent, KeypadKey } from '@/shared/entry/keypad';
 
 export type BenchKeyProps = {
   keypadKey: KeypadKey;
-  label: string;
+  /** accessible name of a key without words */
+  label?: string;
   onEvent: (event: KeypadEvent) => void;
   shortcut?: string;
   /** dead space is none: the cell is what is touched, the face what is seen */

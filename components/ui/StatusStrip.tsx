@@ -2,6 +2,7 @@ import { View, useWindowDimensions } from 'react-native';
 import { AppText } from './AppText';
 import { Icon } from './Icon';
 import { PressArea } from './PressArea';
+import { Spoken } from './Spoken';
 import { useTheme } from './ThemeProvider';
 import { space, stroke } from './tokens';
 
@@ -36,12 +37,7 @@ export function StatusStrip({
   const room = (width - 2 * space.s - (count > 0 ? size * 3 : 0) - (isOld ? size + 4 : 0)) / (size * 0.6);
   const shown = who.length + 1 + where.length > room ? (facts.whereShort ?? where) : where;
   return (
-    <PressArea
-      onPress={onPress}
-      label={`${who}. ${where}. ${count === 0 ? 'Nothing needs a person' : `${count} need a person`}. Open the list of what is not sent`}
-      web={{ dataSet: { print: 'no' } }}
-      style={{ alignSelf: 'stretch' }}
-    >
+    <PressArea onPress={onPress} web={{ dataSet: { print: 'no' } }} style={{ alignSelf: 'stretch' }}>
       {(isPressed) => (
         <View
           style={{
@@ -80,6 +76,9 @@ export function StatusStrip({
               </AppText>
             </View>
           ) : null}
+          <Spoken>
+            {count === 0 ? 'Nothing needs a person.' : 'need a person.'} Open the list of what is not sent
+          </Spoken>
         </View>
       )}
     </PressArea>
