@@ -64,7 +64,10 @@ export function SessionCard({ session, isSelected, href, onGo }: Props) {
 function countsOf({ runCount, rungCount, readingCount, lastReadingAt }: SessionSummary): string {
   if (readingCount === 0 && runCount === 0) return 'no run yet';
   const runs = runCount === 1 ? '1 run' : `${runCount} runs`;
-  const readings =
-    rungCount > 0 ? `${readingCount} readings of ${rungCount} planned` : `${readingCount} readings`;
+  // repeats make more readings than lifts
+  const hasRepeats = rungCount > 0 && readingCount > rungCount;
+  const ofPlan =
+    rungCount === 0 ? '' : hasRepeats ? ` for ${rungCount} planned lifts` : ` of ${rungCount} planned`;
+  const readings = `${readingCount} readings${ofPlan}`;
   return [runs, readings, ...(lastReadingAt ? [`last ${localTime(lastReadingAt)}`] : [])].join(', ');
 }

@@ -1,4 +1,5 @@
 import type { ReactNode } from 'react';
+import { unitLabel } from '@/components/capture/captureProps';
 import { AppText } from '@/components/ui/AppText';
 import { Banner } from '@/components/ui/Banner';
 import { Button } from '@/components/ui/Button';
@@ -104,7 +105,7 @@ export function BenchNewSession(props: BenchNewSessionProps) {
           hint="Flows are brought to this test pressure"
           kind="decimal"
           maxLength={12}
-          unit={form.pressureUnit ?? shop.standardPressureUnit}
+          unit={unitLabel(form.pressureUnit ?? shop.standardPressureUnit)}
           value={form.pressureText ?? shop.standardPressureText}
           onChange={(pressureText) => onChange({ pressureText })}
           problem={problems.pressureText}

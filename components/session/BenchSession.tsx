@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import { unitLabel } from '@/components/capture/captureProps';
 import { AppText } from '@/components/ui/AppText';
 import { Banner } from '@/components/ui/Banner';
 import { Button } from '@/components/ui/Button';
@@ -31,7 +32,8 @@ export function BenchSession({ view, runHref, onOpenRun, onStartRun, onHandIn }:
   const notSentCount = readings.filter((reading) => reading.mark !== 'sent').length;
   const isKeyable = session.state === 'open' || session.state === 'returned';
   const port = nextPort(view);
-  const standard = `${session.settings.standardPressureText} ${session.settings.standardPressureUnit}`;
+  const { settings } = session;
+  const standard = `${settings.standardPressureText} ${unitLabel(settings.standardPressureUnit)}`;
 
   const work = async (act: () => Promise<string | null>) => {
     setIsBusy(true);

@@ -54,6 +54,7 @@ export function RunCapture(props: RunCaptureProps) {
     document.title = `${title}, session ${session.label} · Inchwater`;
   }, [title, session.label]);
 
+  const locked = lockedSentence(view);
   const following = nextPort(view);
   const opened = rows.find((row) => row.reading.id === workingId);
   const undo = (readingId: string) => {
@@ -61,9 +62,17 @@ export function RunCapture(props: RunCaptureProps) {
       run.readings.find((reading) => reading.id === readingId)?.rungId ?? state.saved?.rung.id ?? null;
     props.onUndo({ id: readingId, rungId });
   };
+  /** a closed session is looked at, not changed: the change would be held */
+  const unlessLocked = (act: () => void) => () => {
+    if (locked === null) act();
+  };
+  const goToRung = (rungId: string) => {
+    const isSkipped = run.rungs.some((rung) => rung.id === rungId && rung.isSkipped);
+    if (locked === null || !isSkipped) props.onGoToRung(rungId);
+  };
   const repeat = () => {
     const rungId = state.saved?.rung.id ?? run.readings.at(-1)?.rungId;
-    if (rungId) props.onGoToRung(rungId);
+    if (rungId) goToRung(rungId);
   };
   const startRun = async (proposal: RunProposal) => {
     setIsBusy(true);
@@ -78,20 +87,20 @@ export function RunCapture(props: RunCaptureProps) {
         rungs={rungs}
         currentRungId={state.rungId}
         keypad={{ ...state.keypad, notice: noticeFor(state) }}
-        result={shownResult(view, run, state.rungId, state.saved)}
+        result={shownResult(view, run, state.rungId, state.saved, locked === null)}
         facts={props.facts}
         flowUnit={settings.flowUnit}
         pressureUnit={settings.pressureUnit}
         standardPressure={`${settings.standardPressureText} ${unitLabel(settings.standardPressureUnit)}`}
         chips={state.chips}
-        lockedSentence={lockedSentence(view)}
+        lockedSentence={locked}
         onKeypadEvent={props.onKeypadEvent}
         onUndo={undo}
         onRepeat={repeat}
-        onSkip={props.onSkip}
-        onGoToRung={props.onGoToRung}
-        onAddLift={() => setPanel('addLift')}
-        onToggleChip={props.onToggleChip}
+        onSkip={unlessLocked(props.onSkip)}
+        onGoToRung={goToRung}
+        onAddLift={unlessLocked(() => setPanel('addLift'))}
+        onToggleChip={(chip) => unlessLocked(() => props.onToggleChip(chip))()}
         onOpenWorking={setWorkingId}
         onOpenStatus={props.onOpenStatus}
         onLeave={props.onLeave}

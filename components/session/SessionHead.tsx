@@ -22,9 +22,9 @@ export function SessionHead({ view }: { view: SessionView }) {
   if (session.note) longFacts.push(['Note', session.note]);
   return (
     <Card label="What it was measured on" gap="s">
-      <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: space.xl, rowGap: space.s }}>
+      <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: space.l, rowGap: space.s }}>
         {facts.map(([name, value]) => (
-          <Fact key={name} name={name} value={value} basisPx={150} />
+          <Fact key={name} name={name} value={value} basisPx={130} />
         ))}
       </View>
       {longFacts.map(([name, value]) => (

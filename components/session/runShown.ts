@@ -25,6 +25,7 @@ export function shownResult(
   run: RunView,
   rungId: string | null,
   saved: SavedNow | null,
+  mayUndo: boolean,
 ): ShownResult | null {
   const { settings } = view.session;
   if (saved) {
@@ -34,7 +35,7 @@ export function shownResult(
       readingId: saved.readingId,
       correctedText: correctReading(keyed, settings, run.run.direction)?.text ?? null,
       words: mark === 'onDevice' ? 'Saved on this device' : `saved, ${markWords[mark]}`,
-      undoUntilMs: saved.atMs + undoShownMs,
+      undoUntilMs: mayUndo ? saved.atMs + undoShownMs : null,
     };
   }
   const used = run.readings.filter((reading) => reading.isUsed);
@@ -45,7 +46,7 @@ export function shownResult(
     readingId: reading.id,
     correctedText: correctReading(reading, settings, run.run.direction)?.text ?? null,
     words: ofRung ? `this lift, ${markWords[reading.mark]}` : liftWords(reading),
-    undoUntilMs: ofRung ? Date.now() + fromTheRungMs : null,
+    undoUntilMs: ofRung && mayUndo ? Date.now() + fromTheRungMs : null,
   };
 }
 
