@@ -153,7 +153,7 @@ function ReadPart({ layout, props, current, onOpen }: PartProps) {
         <DoubtStrip
           layout={layout}
           doubt={props.doubt}
-          height={layout.valuesHeight * (layout.arrangement === 'tabletSide' ? 2 : 1) + layout.resultHeight}
+          height={layout.arrangement === 'tabletSide' ? undefined : layout.valuesHeight + layout.resultHeight}
           onAnswer={(id) => props.onAnswerDoubt?.(id)}
         />
       ) : (

@@ -16,7 +16,8 @@ export function DoubtStrip({
 }: {
   layout: CaptureLayout;
   doubt: ShownDoubt;
-  height: number;
+  /** of what it covers; without it, its own */
+  height?: number;
   onAnswer: (answerId: string) => void;
 }) {
   const { colors } = useTheme();
@@ -27,6 +28,7 @@ export function DoubtStrip({
       style={{
         height,
         justifyContent: 'space-between',
+        gap: space.xs,
         padding: space.xs,
         paddingHorizontal: space.s,
         borderRadius: radius.key,
