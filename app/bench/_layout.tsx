@@ -1,10 +1,10 @@
 import { Navigator, Redirect, Slot, usePathname, useRouter, useSegments } from 'expo-router';
 import { useEffect } from 'react';
-import { View } from 'react-native';
+import { View, useWindowDimensions } from 'react-native';
 import { BenchFailed, BenchOpening, BenchOtherTab } from '@/components/bench/BenchClosed';
 import { PinGate } from '@/components/bench/PinGate';
 import { copyName, saveFile } from '@/components/bench/saveFile';
-import { statusFacts } from '@/components/bench/statusFacts';
+import { isNarrowFor, statusFacts } from '@/components/bench/statusFacts';
 import { StatusStrip } from '@/components/ui/StatusStrip';
 import { ThemeProvider, useTheme } from '@/components/ui/ThemeProvider';
 import { useBenchStore } from '@/stores/bench/benchStore';
@@ -60,13 +60,14 @@ function BenchInside({ personName }: { personName: string }) {
   const router = useRouter();
   const sync = useBenchStore((state) => state.sync);
   const { isTablet } = useTheme();
+  const { width } = useWindowDimensions();
   // the capture screen has the strip in its own sum of heights
   const isKeying = useSegments().some((segment) => segment === '[runId]');
   if (isKeying) return <Slot />;
   return (
     <View style={{ flex: 1 }}>
       <StatusStrip
-        facts={statusFacts(personName, sync, new Date())}
+        facts={statusFacts(personName, sync, new Date(), isNarrowFor(width))}
         height={isTablet ? 64 : 48}
         onPress={() => router.push('/bench/unsent')}
       />

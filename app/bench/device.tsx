@@ -7,7 +7,7 @@ import { usePreferencesStore } from '@/stores/preferences/preferencesStore';
 export default function BenchDeviceRoute() {
   const router = useRouter();
   const { shop, device, person, lock } = useBenchStore();
-  const { theme, keySize, choose } = usePreferencesStore();
+  const { theme, bounceMs, choose } = usePreferencesStore();
   return (
     <Screen
       title="This device"
@@ -20,9 +20,9 @@ export default function BenchDeviceRoute() {
         deviceName={device?.name ?? ''}
         personName={person?.name ?? ''}
         theme={theme}
-        keySize={keySize}
+        bounceMs={bounceMs}
         onTheme={(next) => choose({ theme: next })}
-        onKeySize={(next) => choose({ keySize: next })}
+        onBounceMs={(next) => choose({ bounceMs: next })}
         onChangePerson={() => {
           lock();
           router.replace('/bench');

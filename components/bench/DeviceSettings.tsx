@@ -1,14 +1,10 @@
-import { View } from 'react-native';
 import { AppText } from '@/components/ui/AppText';
 import { Button } from '@/components/ui/Button';
 import { Choice } from '@/components/ui/Choice';
 import { Card, Stack } from '@/components/ui/Layout';
-import { useTheme } from '@/components/ui/ThemeProvider';
 
 type Theme = 'system' | 'daylight' | 'shed';
-type KeySize = 'normal' | 'large';
-/** 20 mm at the 96 px an inch that browsers count with; the ruler on the glass says whether that holds here. */
-const rulerPx = (20 / 25.4) * 96;
+const bounceChoices = [50, 80, 150, 250];
 
 /** What can be chosen for this device, and who stands at it. */
 export function DeviceSettings(props: {
@@ -16,12 +12,11 @@ export function DeviceSettings(props: {
   deviceName: string;
   personName: string;
   theme: Theme;
-  keySize: KeySize;
+  bounceMs: number;
   onTheme: (theme: Theme) => void;
-  onKeySize: (size: KeySize) => void;
+  onBounceMs: (bounceMs: number) => void;
   onChangePerson: () => void;
 }) {
-  const { colors, isTablet } = useTheme();
   return (
     <Stack gap="xl">
       <Card label="This device">
@@ -39,28 +34,19 @@ export function DeviceSettings(props: {
         value={props.theme}
         onChange={props.onTheme}
       />
-      {isTablet ? (
-        <Stack gap="m">
-          <Choice
-            label="Keys"
-            layout="row"
-            options={[
-              { value: 'normal', title: 'Normal' },
-              { value: 'large', title: 'Large' },
-            ]}
-            value={props.keySize}
-            onChange={props.onKeySize}
-          />
-          <AppText color="quietInk">
-            This bar should measure 20 mm. If it is shorter on your glass, take the large keys.
-          </AppText>
-          <View
-            role="img"
-            aria-label="Ruler of 20 millimetres"
-            style={{ width: rulerPx, height: 24, backgroundColor: colors.ink }}
-          />
-        </Stack>
-      ) : null}
+      <Choice
+        label="A key pressed twice by a slip"
+        options={bounceChoices.map((each) => ({
+          value: String(each),
+          title: `${each} ms`,
+          ...(each === 80 ? { detail: 'as usual' } : each === 250 ? { detail: 'thick gloves' } : {}),
+        }))}
+        value={String(props.bounceMs)}
+        onChange={(each) => props.onBounceMs(Number(each))}
+      />
+      <AppText color="quietInk">
+        The same key again within this time counts once; the pad then says “Repeat ignored”.
+      </AppText>
     </Stack>
   );
 }

@@ -36,7 +36,7 @@ type WayProps = { title: string; sentence: string; icon: IconName; href: string;
 function Way({ title, sentence, icon, href, onPress }: WayProps) {
   const { colors } = useTheme();
   return (
-    <PressArea onPress={onPress} href={href} label={`${title}. ${sentence}`} style={{ flex: 1 }}>
+    <PressArea onPress={onPress} href={href} style={{ flex: 1 }}>
       {(isPressed) => (
         <View
           style={{

@@ -35,6 +35,9 @@ export function UnsentList({ sync, lines, onSendNow, onKeepCopy, onEnrolAgain }:
   const [copy, setCopy] = useState<'no' | 'made' | 'failed'>('no');
   const needsPerson = lines.filter((line) => line.verdict !== null);
   const waiting = lines.filter((line) => line.verdict === null);
+  // what is the same for all is said once, above
+  const answers = new Set(waiting.map((line) => line.lastAnswer));
+  const sharedAnswer = answers.size === 1 ? (waiting[0]?.lastAnswer ?? null) : null;
   return (
     <Stack gap="l">
       <Stack gap="s">
@@ -84,7 +87,8 @@ export function UnsentList({ sync, lines, onSendNow, onKeepCopy, onEnrolAgain }:
       {waiting.length > 0 ? (
         <LineList
           title={`${sync.unsentCount} saved on this device, not sent yet`}
-          lines={waiting}
+          lines={waiting.map((line) => (sharedAnswer ? { ...line, lastAnswer: null } : line))}
+          note={sharedAnswer ? `Last answer: ${sharedAnswer}` : undefined}
           moreCount={sync.unsentCount - waiting.length}
         />
       ) : (
@@ -97,10 +101,13 @@ export function UnsentList({ sync, lines, onSendNow, onKeepCopy, onEnrolAgain }:
 function LineList({
   title,
   lines,
+  note,
   moreCount = 0,
 }: {
   title: string;
   lines: UnsentLine[];
+  /** said of all of them */
+  note?: string;
   moreCount?: number;
 }) {
   return (
@@ -108,6 +115,7 @@ function LineList({
       <AppText variant="heading" level={2}>
         {title}
       </AppText>
+      {note ? <AppText color="quietInk">{note}</AppText> : null}
       <Card label={title} gap="l">
         {lines.map((line) => (
           <UnsentEntry key={line.id} line={line} />

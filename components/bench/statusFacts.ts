@@ -12,24 +12,29 @@ export type DeviceStanding = {
   lastSentAt: string | null;
 };
 
+/** Whether a whole name and the place of the readings do not fit beside each other. */
+export const isNarrowFor = (widthPx: number): boolean => widthPx < 560;
+
 const hourMs = 60 * 60 * 1000;
 const oldFromMs = 24 * hourMs;
 
-/** The three facts of the status strip. */
-export function statusFacts(who: string, sync: DeviceStanding, now: Date): StatusFacts {
+/** The three facts of the status strip. On a narrow screen the given name stands for the person: where the readings are
+ * must not be cut off. */
+export function statusFacts(name: string, sync: DeviceStanding, now: Date, isNarrow: boolean): StatusFacts {
+  const who = isNarrow ? (name.split(/\s+/)[0] ?? name) : name;
   const ageMs = sync.oldestUnsentAt === null ? 0 : now.getTime() - Date.parse(sync.oldestUnsentAt);
   const isOld = sync.unsentCount > 0 && ageMs > oldFromMs;
-  return { who, where: whereWords(sync, ageMs, isOld), isOld, needsPersonCount: needsPerson(sync) };
+  return { who, where: whereWords(sync, ageMs, isOld, now), isOld, needsPersonCount: needsPerson(sync) };
 }
 
-function whereWords(sync: DeviceStanding, ageMs: number, isOld: boolean): string {
+function whereWords(sync: DeviceStanding, ageMs: number, isOld: boolean, now: Date): string {
   if (sync.unsentCount > 0) {
     const days = Math.floor(ageMs / (24 * hourMs));
     return isOld
       ? `${sync.unsentCount} on this device for ${days === 1 ? '1 day' : `${days} days`}`
       : `${sync.unsentCount} saved on this device`;
   }
-  return sync.lastSentAt === null ? 'nothing to send yet' : `all sent ${localTime(sync.lastSentAt)}`;
+  return sync.lastSentAt === null ? 'nothing to send' : `all sent ${localTime(sync.lastSentAt, now)}`;
 }
 
 /** How many things stand until a person does something about them. */

@@ -31,11 +31,7 @@ export function BenchRunLine({
       ? `finished: ${run.readings.length} readings${skipped.length > 0 ? `, ${skipped.length} skipped` : ''}`
       : `${doneCount} of ${run.rungs.length} lifts, next ${toDo[0]}`;
   return (
-    <PressArea
-      onPress={onOpen}
-      href={href}
-      label={`Run ${run.run.runOrdinal}: ${runTitle(run.run)}. ${words}`}
-    >
+    <PressArea onPress={onOpen} href={href}>
       {(isPressed) => (
         <View
           style={{

@@ -27,11 +27,7 @@ export function BenchSessionLine({
   const { colors } = useTheme();
   const word = stateWord(summary);
   return (
-    <PressArea
-      onPress={onOpen}
-      href={href}
-      label={`Session ${summary.label}, ${word}: ${summary.customerName}, ${summary.headName}, ${summary.stageName}. ${countWords(summary)}`}
-    >
+    <PressArea onPress={onOpen} href={href}>
       {(isPressed) => (
         <View
           style={{

@@ -141,6 +141,7 @@ export function createRunCapture(options: RunCaptureOptions): RunCapture {
       chips: state.chips === chips ? [] : state.chips,
       saved: { ...commit, readingId, rung, atMs: options.nowMs() },
       failure: null,
+      isDraftAtRisk: false,
     }));
     const { flowText, pressureText } = get().keypad;
     if (hasMoved || flowText || pressureText) keepDraft();

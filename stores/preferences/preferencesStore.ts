@@ -4,7 +4,6 @@ import { create } from 'zustand';
 /** What somebody chose for this device's bench screens. */
 export const Preferences = z.strictObject({
   theme: z.enum(['system', 'daylight', 'shed']).catch('daylight'),
-  keySize: z.enum(['normal', 'large']).catch('normal'),
   /** the same key again within this time of its release is bounce */
   bounceMs: z.number().int().min(50).max(250).catch(80),
 });
@@ -13,16 +12,16 @@ export type Preferences = z.infer<typeof Preferences>;
 type PreferencesState = Preferences & { choose: (change: Partial<Preferences>) => void };
 
 const place = 'inchwater.bench.preferences';
-const usual: Preferences = { theme: 'daylight', keySize: 'normal', bounceMs: 80 };
+const usual: Preferences = { theme: 'daylight', bounceMs: 80 };
 
 /** The bench's looks and keys as chosen on this device. */
 export const usePreferencesStore = create<PreferencesState>()((set, get) => ({
   ...readPreferences(),
   choose: (change) => {
     set(change);
-    const { theme, keySize, bounceMs } = get();
+    const { theme, bounceMs } = get();
     try {
-      localStorage.setItem(place, JSON.stringify({ theme, keySize, bounceMs } satisfies Preferences));
+      localStorage.setItem(place, JSON.stringify({ theme, bounceMs } satisfies Preferences));
     } catch {
       // a browser that keeps nothing: the choice holds until the page is closed
     }

@@ -1,5 +1,6 @@
 import { useLocalSearchParams, useRouter } from 'expo-router';
-import { statusFacts } from '@/components/bench/statusFacts';
+import { useWindowDimensions } from 'react-native';
+import { isNarrowFor, statusFacts } from '@/components/bench/statusFacts';
 import { RunCapture } from '@/components/session/RunCapture';
 import { Screen } from '@/components/ui/Screen';
 import { EmptyState, ErrorState, Progress } from '@/components/ui/States';
@@ -47,6 +48,7 @@ export default function RunRoute() {
 function Keying({ view, run, keptDraft }: { view: SessionView; run: RunView; keptDraft: unknown }) {
   const router = useRouter();
   const { person, sync } = useBenchStore();
+  const { width } = useWindowDimensions();
   const sessionId = view.session.id;
   const { capture, state } = useRunCapture(view, run.run.id, parseRunDraft(keptDraft));
   useKeepScreenOn();
@@ -63,7 +65,7 @@ function Keying({ view, run, keptDraft }: { view: SessionView; run: RunView; kep
     <RunCapture
       view={view}
       run={run}
-      facts={statusFacts(person?.name ?? '', sync, new Date())}
+      facts={statusFacts(person?.name ?? '', sync, new Date(), isNarrowFor(width))}
       state={state}
       onKeypadEvent={capture.send}
       onGoToRung={(rungId) => void capture.goToRung(rungId)}
