@@ -80,7 +80,26 @@ export function withShopWrite<T>(db: ServerDb, shopId: string, fn: (tx: ShopTx) 
     `select set_config('app.shop_id', ${shop}, true), set_config('app.feed_lock', ${shop}, true)`,
     `select pg_notify('feed', ${shop})`,
   ];
-  return inTransaction(db, shopId, opening, fn);
+  return inTurn(db, shopId, () => inTransaction(db, shopId, opening, fn));
+}
+
+const turns = new WeakMap<ServerDb, Map<string, Promise<unknown>>>();
+
+/** Writers of one shop wait for one another here, before they take a connection: fifty devices that push at once would
+ * otherwise hold every connection of the pool while they wait for the lock, and nobody could read. The lock in the
+ * database remains what counts; other processes wait there.
+ */
+async function inTurn<T>(db: ServerDb, shopId: string, work: () => Promise<T>): Promise<T> {
+  const ofShops = turns.get(db) ?? new Map<string, Promise<unknown>>();
+  turns.set(db, ofShops);
+  const mine = (ofShops.get(shopId) ?? Promise.resolve()).then(work);
+  const over = mine.catch(() => undefined);
+  ofShops.set(shopId, over);
+  try {
+    return await mine;
+  } finally {
+    if (ofShops.get(shopId) === over) ofShops.delete(shopId);
+  }
 }
 
 /** Asks one of the functions that answer before the shop is known; they return ids and nothing else. */

@@ -2,8 +2,17 @@ import fs from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import zlib from 'node:zlib';
+import pino from 'pino';
 import request from 'supertest';
-import { asPerson, testServer, testShop, type TestServer, type TestShop } from '@/tests/factories/shopWorld';
+import { createApp } from '@/server/app';
+import {
+  asPerson,
+  cookieOf,
+  testServer,
+  testShop,
+  type TestServer,
+  type TestShop,
+} from '@/tests/factories/shopWorld';
 
 let server: TestServer;
 let shop: TestShop;
@@ -162,4 +171,35 @@ describe('the app', () => {
     expect(policy).not.toContain('upgrade-insecure-requests');
     expect((await get('/')).get('X-Powered-By')).toBeUndefined();
   });
+});
+
+test('what is logged of a request is its way, its outcome and its id: no token, password, PIN or code', async () => {
+  const lines: string[] = [];
+  const sink = { write: (line: string) => void lines.push(line) };
+  const app = createApp({ ...server.deps, log: pino({ level: 'trace' }, sink) });
+  const { mail, password, id, token } = shop.people.owner;
+  const signedIn = await request(app).post('/api/auth/sign-in').send({ mail, password }).expect(200);
+  await request(app)
+    .put(`/api/people/${id}/pin`)
+    .set('Authorization', `Bearer ${token}`)
+    .send({ pin: '918273' });
+  await request(app).post('/api/auth/refresh').set('Cookie', cookieOf(signedIn)).send({}).expect(200);
+  await request(app).get('/api/sync/pull?after=0&secret=abc').set('Authorization', 'Bearer some-token');
+  await request(app).post('/api/sync/enrol').send({ code: 'QRSTUVWX', deviceName: 'x' });
+  expect(lines).toHaveLength(5);
+  expect(JSON.parse(lines[1] ?? '')).toMatchObject({
+    req: { method: 'PUT', path: `/api/people/${id}/pin`, id: expect.any(String) },
+    res: { status: 204 },
+  });
+  const secrets = [
+    password,
+    mail,
+    '918273',
+    token,
+    'some-token',
+    'secret=abc',
+    'QRSTUVWX',
+    cookieOf(signedIn),
+  ];
+  for (const secret of [...secrets, signedIn.body.accessToken]) expect(lines.join('')).not.toContain(secret);
 });

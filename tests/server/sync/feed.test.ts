@@ -108,6 +108,19 @@ test('eight devices write while two readers poll: the feed has no holes and the 
   expect(seqs).toEqual(Array.from({ length: seqs.length }, (_, index) => index + 1));
 });
 
+test('fifty devices push at the same moment: none is refused, none is lost, and reading goes on meanwhile', async () => {
+  const many = await Promise.all(
+    Array.from({ length: 50 }, (_, n) => testDevice(server, shop, `of fifty ${n}`)),
+  );
+  const changes = many.map((one) => newReading(one));
+  const pushes = many.map((one, index) => one.push(changes[index]));
+  await device.pullPage({ limit: 1 }).expect(200);
+  const answers = await Promise.all(pushes);
+  expect(answers.map(({ verdicts }) => verdicts[0]?.verdict)).toEqual(many.map(() => 'applied'));
+  const got = new Set((await device.pullAll()).items.map((item) => item.id));
+  expect(changes.filter((change) => !got.has(change.rid))).toEqual([]);
+});
+
 test('a write to a synced table outside the one function is refused by the database', async () => {
   const app = new pg.Client({ connectionString: server.db.appUrl });
   await app.connect();

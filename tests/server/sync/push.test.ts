@@ -383,7 +383,7 @@ describe('closed doors', () => {
     const ids = await sentChain();
     await asPerson(server, shop.people.supervisor).post(`/api/devices/${device.id}/revoke`).expect(204);
     const change = newReading(ids);
-    for (const _ of ['once', 'again']) {
+    for (let times = 0; times < 2; times += 1) {
       const answer = await device.send([change]).expect(403);
       expect(answer.body).toMatchObject({
         code: 'device_revoked',
