@@ -1,4 +1,4 @@
-import { fireEvent, render, screen } from '@testing-library/react';
+import { configure, fireEvent, render, screen } from '@testing-library/react';
 import { BenchNewSession } from '@/components/session/BenchNewSession';
 import { numberedPorts } from '@/shared/session/newSessionForm';
 import { useNewSessionStore } from '@/stores/newSession/newSessionStore';
@@ -7,6 +7,9 @@ import type { StartSessionInput } from '@/stores/bench/startSession';
 import { benchFields, shopSettings } from '../factories/deviceFixture';
 import { newId } from '../factories/records';
 import { Catalogue } from '@/shared/schema/views';
+
+// computing what is hidden for every role takes most of the time in jsdom, and a loaded machine needs patience
+configure({ defaultHidden: true, asyncUtilTimeout: 10_000 });
 
 const benchId = newId();
 const catalogue = Catalogue.parse({

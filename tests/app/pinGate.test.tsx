@@ -1,5 +1,8 @@
-import { act, fireEvent, render, screen } from '@testing-library/react';
+import { act, configure, fireEvent, render, screen } from '@testing-library/react';
 import { PinGate, type PinAnswer } from '@/components/bench/PinGate';
+
+// computing what is hidden for every role takes most of the time in jsdom, and a loaded machine needs patience
+configure({ defaultHidden: true, asyncUtilTimeout: 10_000 });
 
 const people = [
   { id: 'a', name: 'Ada Fell', hasPin: true },

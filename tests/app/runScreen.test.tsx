@@ -1,5 +1,5 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { act, createEvent, fireEvent, render, screen } from '@testing-library/react';
+import { act, configure, createEvent, fireEvent, render, screen } from '@testing-library/react';
 import { TextEncoder } from 'node:util';
 import { RunCapture } from '@/components/session/RunCapture';
 import { useBenchStore } from '@/stores/bench/benchStore';
@@ -10,6 +10,9 @@ import { useRunCapture } from '@/stores/capture/useRunCapture';
 import { useBenchSession, useDraft } from '@/stores/queries/benchQueries';
 import { readSession } from '@/stores/queries/benchReads';
 import { enrolledDevice, standAtBench } from '../factories/deviceFixture';
+
+// computing what is hidden for every role takes most of the time in jsdom, and a loaded machine needs patience
+configure({ defaultHidden: true, asyncUtilTimeout: 10_000 });
 
 /* One run's screen as it stands in the app: real pad, real reducer, real verbs, real queries, the real SQLite build. */
 
