@@ -297,7 +297,8 @@ describe('devices', () => {
   test('shutting out twice is done and written down once; an unknown device is 404', async () => {
     const device = await testDevice(server, await freshShop(), 'lost');
     const person = await freshSupervisor();
-    for (let times = 0; times < 2; times += 1) await person.post(`/api/devices/${device.id}/revoke`).expect(204);
+    for (let times = 0; times < 2; times += 1)
+      await person.post(`/api/devices/${device.id}/revoke`).expect(204);
     expect(await auditOf('deviceRevoked', device.id)).toHaveLength(1);
     expect(problem(await person.post(`/api/devices/${v7()}/revoke`))).toEqual([404, 'no_such_record']);
   });
