@@ -35,7 +35,7 @@ export function UnsentList({ sync, lines, onSendNow, onKeepCopy, onEnrolAgain }:
   const [copy, setCopy] = useState<'no' | 'made' | 'failed'>('no');
   const needsPerson = lines.filter((line) => line.verdict !== null);
   const waiting = lines.filter((line) => line.verdict === null);
-  // what is the same for all is said once, above
+  // what is the same for all of them is said once, above
   const answers = new Set(waiting.map((line) => line.lastAnswer));
   const sharedAnswer = answers.size === 1 ? (waiting[0]?.lastAnswer ?? null) : null;
   return (

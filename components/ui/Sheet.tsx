@@ -5,6 +5,7 @@ import { Button } from './Button';
 import { Row } from './Layout';
 import { useTheme } from './ThemeProvider';
 import { radius, space, stroke } from './tokens';
+import { webProps } from './webProps';
 
 export type SheetProps = {
   title: string;
@@ -51,7 +52,11 @@ export function Sheet({ title, onClose, isFullScreen = false, closeTitle = 'Clos
             </AppText>
             <Button title={closeTitle} icon="close" onPress={onClose} />
           </Row>
-          <ScrollView style={{ flexShrink: 1 }} contentContainerStyle={{ gap: space.m, padding: 3 }}>
+          <ScrollView
+            {...webProps({ tabIndex: 0 })}
+            style={{ flexShrink: 1 }}
+            contentContainerStyle={{ gap: space.m, padding: 3 }}
+          >
             {children}
           </ScrollView>
         </View>
