@@ -1,5 +1,6 @@
 import { v7 } from 'uuid';
 import { Id } from '@/shared/schema/primitives';
+import type { Change } from '@/shared/sync/protocol';
 import { syncTableNames } from '@/shared/sync/syncTables';
 import type { ShopTx } from '../transaction';
 import type { Judged } from './judgeChanges';
@@ -72,7 +73,7 @@ function placesOf(judged: readonly Judged[]) {
 
 function logLine({ incoming, verdict, isCombined, old }: Judged, seq: number | null) {
   return {
-    ...headOf(incoming.change ?? incoming.body),
+    ...(incoming.change ? headOf(incoming.change) : headOfUnread(incoming.body)),
     id: incoming.id,
     n: incoming.n,
     body: incoming.body,
@@ -95,8 +96,18 @@ const insertLog = (rows: string, deviceId: string, receivedAt: string) =>
      sv integer, body jsonb, verdict text, why text, detail text, version integer, seq bigint, old jsonb,
      "isCombined" boolean, "at" text)`;
 
-/** What the columns of the log say about a change, as far as it can be read. */
-function headOf(change: unknown) {
+/** What the columns of the log say about a change. */
+const headOf = ({ by, kind, table, rid, sv, at }: Change) => ({
+  by,
+  kind,
+  table,
+  rid,
+  sv: Math.min(sv, largestInteger),
+  at,
+});
+
+/** The same of one that could not be read, as far as it goes. */
+function headOfUnread(change: unknown) {
   const given: Record<string, unknown> = typeof change === 'object' && change !== null ? { ...change } : {};
   const text = (value: unknown) => (typeof value === 'string' ? storable(value.slice(0, 60)) : '');
   const id = (value: unknown) => (Id.safeParse(value).success ? value : null);
