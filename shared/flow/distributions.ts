@@ -123,7 +123,8 @@ function solve(
     const slope = density(x);
     const newton = slope > 0 ? x - gap / slope : Number.NaN;
     const next = newton > low && newton < high ? newton : (low + high) / 2;
-    if (Math.abs(next - x) <= 1e-15 * Math.abs(next)) return next;
+    // Newton squares its error: after a step this small the next one would be below the last digit
+    if (Math.abs(next - x) <= (next === newton ? 1e-9 : 1e-15) * Math.abs(next)) return next;
     x = next;
   }
   return x;

@@ -18,7 +18,8 @@ export function lnGamma(x: number): number {
   if (x < 0.5) return Math.log(Math.PI / Math.sin(Math.PI * x)) - lnGamma(1 - x);
   const z = x - 1;
   const t = z + 7.5;
-  const sum = lanczos.reduce((total, c, i) => total + (i === 0 ? c : c / (z + i)), 0);
+  let sum = lanczos[0] ?? 1;
+  for (let i = 1; i < lanczos.length; i++) sum += (lanczos[i] ?? 0) / (z + i);
   return 0.5 * Math.log(2 * Math.PI) + (z + 0.5) * Math.log(t) - t + Math.log(sum);
 }
 
@@ -48,7 +49,7 @@ function betaFraction(x: number, a: number, b: number): number {
     d = 1 / awayFromZero(1 + odd * d);
     c = awayFromZero(1 + odd / c);
     product *= d * c;
-    if (Math.abs(d * c - 1) < 1e-16) break;
+    if (Math.abs(d * c - 1) < 1e-15) break;
   }
   return product;
 }
@@ -106,7 +107,7 @@ export function regularizedGammaQ(a: number, x: number): number {
     d = 1 / awayFromZero(step * d + b);
     c = awayFromZero(b + step / c);
     product *= d * c;
-    if (Math.abs(d * c - 1) < 1e-16) break;
+    if (Math.abs(d * c - 1) < 1e-15) break;
   }
   return front * product;
 }
