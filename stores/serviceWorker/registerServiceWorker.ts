@@ -11,9 +11,11 @@ let isApplying = false;
 export function registerServiceWorker(onUpdate: (apply: () => void) => void): void {
   if (__DEV__ || typeof navigator === 'undefined' || !('serviceWorker' in navigator)) return;
   const { serviceWorker } = navigator;
-  const hadController = serviceWorker.controller !== null;
+  let hadController = serviceWorker.controller !== null;
   serviceWorker.addEventListener('controllerchange', () => {
-    if (!hadController) return; // the first visit: the worker takes over a page that is the same version
+    const isFirst = !hadController;
+    hadController = true;
+    if (isFirst) return; // the first visit: the worker takes over a page that is the same version
     if (isApplying) window.location.reload();
     // another tab took the new version: this page is offered it too, not thrown out of its run
     else onUpdate(() => window.location.reload());
