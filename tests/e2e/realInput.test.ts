@@ -1,6 +1,6 @@
 import pg from 'pg';
 import kamili from '@/tests/vectors/intakeKamili2017.json';
-import { atLift, enrol, keptForOffline, keyPin, keyReading } from './support/atTheBench';
+import { atLift, enrol, keptForOffline, keyPin, keyReading, startRun } from './support/atTheBench';
 import { phone, RealBrowser, until, wide } from './support/chromium';
 import { makeWorld, type World } from './support/world';
 
@@ -38,16 +38,11 @@ test('a run keyed without a network, killed half-way, is what the supervisor and
   await page.context().setOffline(true);
   await page.goto(`${world.server.address}/bench/sessions/new`);
   await keyPin(page, world.operator.name, world.operator.pin);
-  const choose = (name: string | RegExp) => page.getByRole('radio', { name }).click();
-  await choose(/Alder customer/);
-  await choose(/Alder head/);
-  await choose(/Alder as received/);
-  await choose('Typed one by one');
-  await page.getByLabel('Lifts, with spaces between them').fill(rows.map(([lift]) => lift).join(' '));
-  await page.getByRole('button', { name: 'Start the session' }).click();
-  await page.getByRole('button', { name: 'Read. Go on' }).click();
-  await page.getByRole('button', { name: 'New run: intake 1' }).click();
-  await page.getByRole('button', { name: 'Start intake 1' }).click();
+  await startRun(
+    page,
+    world.server.address,
+    rows.map(([lift]) => lift),
+  );
   for (const [lift, flow, pressure] of rows.slice(0, 2)) {
     await atLift(page, `${lift} mm`);
     await keyReading(page, flow, pressure);

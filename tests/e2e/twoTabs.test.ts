@@ -1,6 +1,6 @@
 import pg from 'pg';
 import type { Page } from 'playwright-core';
-import { enrol, keyPin } from './support/atTheBench';
+import { enrol, keyPin, startRun } from './support/atTheBench';
 import { phone, RealBrowser, until } from './support/chromium';
 import { makeWorld, type World } from './support/world';
 
@@ -24,17 +24,7 @@ test('a second tab says that the first has the bench, and takes over with everyt
   await enrol(first, world, 'Shed phone');
   await keyPin(first, world.operator.name, world.operator.pin);
   await first.getByText('No session yet').waitFor();
-  await first.goto(`${world.server.address}/bench/sessions/new`);
-  const choose = (name: string | RegExp) => first.getByRole('radio', { name }).click();
-  await choose(/Alder customer/);
-  await choose(/Alder head/);
-  await choose(/Alder as received/);
-  await choose('Typed one by one');
-  await first.getByLabel('Lifts, with spaces between them').fill('2 4 6');
-  await first.getByRole('button', { name: 'Start the session' }).click();
-  await first.getByRole('button', { name: 'Read. Go on' }).click();
-  await first.getByRole('button', { name: 'New run: intake 1' }).click();
-  await first.getByRole('button', { name: 'Start intake 1' }).click();
+  await startRun(first, world.server.address, ['2', '4', '6']);
   await first.getByText('Intake 1 · 1 of 3').waitFor();
   await keyOnKeyboard(first, '29.8');
   await first.getByText('Intake 1 · 2 of 3').waitFor();

@@ -29,6 +29,7 @@ export class RealBrowser {
 
   constructor(
     private readonly size: Size,
+    private readonly name = path.basename(expect.getState().testPath ?? 'browser', '.test.ts'),
     private readonly executable = '/usr/bin/chromium',
   ) {}
 
@@ -82,8 +83,11 @@ export class RealBrowser {
       fs.rmSync(path.join(this.profile, lock), { force: true });
   }
 
-  /** Ends the browser and removes its profile. */
+  /** Ends the browser and removes its profile. What stood on its screens last stays as pictures, for a test that failed. */
   async dispose(): Promise<void> {
+    const folder = path.resolve(__dirname, '../../../artifacts/pictures/last');
+    for (const [at, page] of (this.browser?.contexts()[0]?.pages() ?? []).entries())
+      await page.screenshot({ path: path.join(folder, `${this.name}-${at}.png`) }).catch(() => undefined);
     await this.kill();
     fs.rmSync(this.profile, { recursive: true, force: true, maxRetries: 5, retryDelay: 200 });
   }
