@@ -83,7 +83,8 @@ const table = {
   not_saved: {
     status: 0,
     again: 'later',
-    sentence: 'This device could not store it. What was entered is still here. Try again, or free some space.',
+    sentence:
+      'This device could not store it. What was entered is still here. Try again, or free some space.',
   },
   timeout: { status: 0, again: 'later', sentence: 'The server did not answer in time. Try again.' },
 } as const;
@@ -118,11 +119,3 @@ export class AppError extends Error {
 export function isErrorCode(code: unknown): code is ErrorCode {
   return typeof code === 'string' && Object.prototype.hasOwnProperty.call(table, code);
 }
-
-/** The sentence a person sees for a code. */
-export function sentenceOf(code: ErrorCode): string {
-  return table[code].sentence;
-}
-
-/** All codes, for tests that walk the table. */
-export const errorCodes = Object.keys(table) as ErrorCode[];

@@ -86,7 +86,7 @@ export function UnsentList({ sync, lines, onSendNow, onKeepCopy, onEnrolAgain }:
       ) : null}
       {waiting.length > 0 ? (
         <LineList
-          title={`${sync.unsentCount} saved on this device, not sent yet`}
+          title={`${sync.unsentCount} waiting to be sent`}
           lines={waiting.map((line) => (sharedAnswer ? { ...line, lastAnswer: null } : line))}
           note={sharedAnswer ? `Last answer: ${sharedAnswer}` : undefined}
           moreCount={sync.unsentCount - waiting.length}

@@ -4,7 +4,10 @@ import type { StatusFacts } from '@/components/ui/StatusStrip';
 /** Where the readings of a device are, in numbers. */
 export type DeviceStanding = {
   state: 'idle' | 'sending' | 'waiting' | 'offline' | 'enrolAgain' | 'revoked' | 'updateNeeded';
+  /** changes of every kind that wait */
   unsentCount: number;
+  /** readings among what they are about */
+  unsentReadingCount: number;
   setAsideCount: number;
   heldCount: number;
   disputeCount: number;
@@ -30,9 +33,11 @@ export function statusFacts(name: string, sync: DeviceStanding, now: Date, isNar
 function whereWords(sync: DeviceStanding, ageMs: number, isOld: boolean, now: Date): string {
   if (sync.unsentCount > 0) {
     const days = Math.floor(ageMs / (24 * hourMs));
+    // people count readings; that a session and its lifts wait too needs no number
+    const count = sync.unsentReadingCount > 0 ? `${sync.unsentReadingCount} ` : '';
     return isOld
-      ? `${sync.unsentCount} on this device for ${days === 1 ? '1 day' : `${days} days`}`
-      : `${sync.unsentCount} saved on this device`;
+      ? `${count}on this device for ${days === 1 ? '1 day' : `${days} days`}`
+      : `${count}saved on this device`;
   }
   return sync.lastSentAt === null ? 'nothing to send' : `all sent ${localTime(sync.lastSentAt, now)}`;
 }

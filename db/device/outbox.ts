@@ -49,13 +49,19 @@ export async function nextBatch(tx: DeviceTx, limit: number): Promise<Change[]> 
   return batch;
 }
 
-/** How many changes wait, and since when the oldest does. */
-export async function waitingOf(tx: DeviceTx): Promise<{ count: number; oldestAt: string | null }> {
+/** How many changes wait, how many readings they are about, and since when the oldest waits. */
+export async function waitingOf(
+  tx: DeviceTx,
+): Promise<{ count: number; readingCount: number; oldestAt: string | null }> {
   const [row] = await tx
-    .select({ count: sql<number>`count(*)`, oldestAt: min(outbox.recordedAt) })
+    .select({
+      count: sql<number>`count(*)`,
+      readingCount: sql<number>`count(distinct case when ${outbox.tableName} = 'readings' then ${outbox.recordId} end)`,
+      oldestAt: min(outbox.recordedAt),
+    })
     .from(outbox)
     .where(isNull(outbox.verdict));
-  return { count: row?.count ?? 0, oldestAt: row?.oldestAt ?? null };
+  return { count: row?.count ?? 0, readingCount: row?.readingCount ?? 0, oldestAt: row?.oldestAt ?? null };
 }
 
 /** Notes that changes were sent without an answer to them. */

@@ -46,6 +46,7 @@ type BenchVerbs = {
 const nothingKnown: BenchSync = {
   state: 'idle',
   unsentCount: 0,
+  unsentReadingCount: 0,
   setAsideCount: 0,
   heldCount: 0,
   disputeCount: 0,

@@ -5,7 +5,10 @@ import { readRefusals } from '@/db/device/unsettled';
 
 /** Where the readings of this device are, in numbers. */
 export type SyncCounts = {
+  /** changes of every kind that wait */
   unsentCount: number;
+  /** readings among what they are about */
+  unsentReadingCount: number;
   setAsideCount: number;
   heldCount: number;
   disputeCount: number;
@@ -28,6 +31,7 @@ export async function readStatus(
     shop: facts.shop ?? null,
     counts: {
       unsentCount: waiting.count,
+      unsentReadingCount: waiting.readingCount,
       oldestUnsentAt: waiting.oldestAt,
       setAsideCount: countOf('rejected'),
       heldCount: countOf('held'),

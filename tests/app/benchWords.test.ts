@@ -5,6 +5,7 @@ const now = new Date('2026-12-02T12:00:00.000Z');
 const standing: DeviceStanding = {
   state: 'idle',
   unsentCount: 0,
+  unsentReadingCount: 0,
   setAsideCount: 0,
   heldCount: 0,
   disputeCount: 0,
@@ -17,17 +18,22 @@ const factsOf = (over: Partial<DeviceStanding>) =>
 
 describe('the status strip', () => {
   it('says how many are saved on this device', () => {
-    expect(factsOf({ unsentCount: 14, oldestUnsentAt: hoursAgo(1) })).toMatchObject({
+    expect(factsOf({ unsentCount: 31, unsentReadingCount: 14, oldestUnsentAt: hoursAgo(1) })).toMatchObject({
       where: '14 saved on this device',
       isOld: false,
     });
   });
   it('tells the age once the oldest has waited over a day', () => {
-    expect(factsOf({ unsentCount: 14, oldestUnsentAt: hoursAgo(23.9) }).isOld).toBe(false);
-    expect(factsOf({ unsentCount: 14, oldestUnsentAt: hoursAgo(50) })).toMatchObject({
+    expect(factsOf({ unsentCount: 31, unsentReadingCount: 14, oldestUnsentAt: hoursAgo(23.9) }).isOld).toBe(
+      false,
+    );
+    expect(factsOf({ unsentCount: 31, unsentReadingCount: 14, oldestUnsentAt: hoursAgo(50) })).toMatchObject({
       where: '14 on this device for 2 days',
       isOld: true,
     });
+  });
+  it('gives no number while only a session and its lifts wait', () => {
+    expect(factsOf({ unsentCount: 13 }).where).toBe('saved on this device');
   });
   it('says when all was sent', () => {
     expect(factsOf({ lastSentAt: hoursAgo(0) }).where).toMatch(/^all sent \d\d:\d\d$/);
