@@ -1,4 +1,5 @@
 import { startTestCluster } from '../factories/testCluster.mjs';
+import { coldStartBench } from './coldStartBench';
 import { pushBench } from './pushBench';
 import { saveBench } from './saveBench';
 import { sizeBench } from './sizeBench';
@@ -8,6 +9,7 @@ import { sizeBench } from './sizeBench';
 const benches: Record<string, () => Promise<void>> = {
   save: saveBench,
   size: sizeBench,
+  coldStart: coldStartBench,
   push: pushBench,
 };
 
