@@ -42,6 +42,7 @@ test.each(sizes)(
     try {
       const page = await browser.open();
       const chooseAt = (path: string, there: () => Promise<void>) => async (theme: string) => {
+        await page.emulateMedia({ colorScheme: theme === 'shed' ? 'dark' : 'light' });
         await page.evaluate(
           (chosen) =>
             localStorage.setItem(
@@ -68,7 +69,9 @@ test.each(sizes)(
       await look('5-unsent', '/bench/unsent', () =>
         page.getByText('Where the readings are').first().waitFor(),
       );
-      await look('6-device', '/bench/device', () => page.getByText('This device').first().waitFor());
+      await look('6-device', '/bench/device', () =>
+        page.getByRole('button', { name: 'Change person' }).waitFor(),
+      );
       await look('7-unknown', '/bench/sessions/nothing', () =>
         page.getByText('not on this device').first().waitFor(),
       );
