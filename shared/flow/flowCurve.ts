@@ -210,10 +210,20 @@ export function meanFlow(curve: Pchip, weights: MeanWeights): number {
 export function meanSensitivities(curve: Pchip, weights: MeanWeights): number[] {
   meanFlow(curve, weights);
   const step = 1e-6 * Math.max(...curve.ys.map(Math.abs), Number.MIN_VALUE * 1e9);
-  const slopePart = (ys: readonly number[]) =>
-    pchipSlopes(curve.xs, ys).reduce((sum, slope, i) => sum + (weights.slopeWeights[i] ?? 0) * slope, 0);
+  const last = curve.xs.length - 1;
   return curve.ys.map((_, i) => {
-    const moved = (by: number) => slopePart(curve.ys.map((y, k) => (k === i ? y + by : y)));
+    // a slope hangs on its neighbours only, so a window around the point is enough; its own cut ends are not true slopes
+    const from = Math.max(0, i - 3);
+    const xs = curve.xs.slice(from, i + 4);
+    const isTrue = (k: number) => k === 0 || k === last || (k > from && k < from + xs.length - 1);
+    const moved = (by: number) => {
+      const ys = curve.ys.slice(from, i + 4);
+      ys[i - from] = (ys[i - from] ?? 0) + by;
+      return pchipSlopes(xs, ys).reduce(
+        (sum, slope, k) => sum + (isTrue(from + k) ? (weights.slopeWeights[from + k] ?? 0) * slope : 0),
+        0,
+      );
+    };
     return (weights.valueWeights[i] ?? 0) + (moved(step) - moved(-step)) / (2 * step);
   });
 }
