@@ -57,6 +57,8 @@ const config: Config = {
     },
   ],
   testTimeout: 20_000,
+  // by default jest leaves one core idle; of two, that is half the machine
+  maxWorkers: '100%',
 };
 
 export default config;
