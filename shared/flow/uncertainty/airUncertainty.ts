@@ -11,7 +11,7 @@ export const unrecordedAirRatio = 0.04;
  * @param uncertainty standard uncertainties of the three, Pa, K, share of saturation; 0 or above
  * @returns u(ρ)/ρ, dimensionless @throws OutOfRangeError (a RangeError) for numbers outside the density's range
  * Range: as airDensityKgPerM3. Source: GUM 5.1.2 with CIPM-2007.
- * @example airDensityUncertaintyRatio({ pressureAbsPa: 101325, temperatureK: 293.15, humidityRatio: 0.5 }, { pressureAbsPa: 100, temperatureK: 0.5, humidityRatio: 0 }) // 0.00201
+ * @example airDensityUncertaintyRatio({ pressureAbsPa: 101325, temperatureK: 293.15, humidityRatio: 0.5 }, { pressureAbsPa: 100, temperatureK: 0.5, humidityRatio: 0 }) // 0.00210
  */
 export function airDensityUncertaintyRatio(
   state: { pressureAbsPa: number; temperatureK: number; humidityRatio: number },

@@ -1,8 +1,7 @@
-import { type Fit } from '@/shared/flow/lineFit';
+import { type Fit } from '@/shared/flow/statistics/lineFit';
+import type { CalibrationGrade } from '@/shared/schema/records';
 import { type BudgetPart } from '@/shared/flow/uncertainty/budget';
 import { positive, zeroOrMore } from '@/shared/units/outOfRange';
-
-export type CalibrationGrade = 'traceable' | 'computed' | 'comparative' | 'none';
 
 /** What a calibration knows of its own uncertainty. */
 export type CalibrationKnown = {

@@ -1,5 +1,5 @@
-import { type MeanWeights, meanFlow, meanSensitivities } from '@/shared/flow/flowCurve';
-import { type Pchip } from '@/shared/flow/pchip';
+import { type MeanWeights, meanFlow, meanSensitivities } from '@/shared/flow/curve/flowCurve';
+import { type Pchip } from '@/shared/flow/curve/pchip';
 import { type Budget, type Contribution, type PartName, budgetOf } from '@/shared/flow/uncertainty/budget';
 import { OutOfRangeError } from '@/shared/units/outOfRange';
 

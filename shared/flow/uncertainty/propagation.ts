@@ -1,5 +1,5 @@
-import { tQuantile } from '@/shared/flow/distributions';
-import { sampleOf } from '@/shared/flow/sampleStatistics';
+import { tQuantile } from '@/shared/flow/statistics/distributions';
+import { sampleOf } from '@/shared/flow/statistics/sampleStatistics';
 import { OutOfRangeError, finite, zeroOrMore } from '@/shared/units/outOfRange';
 
 /** Standard uncertainty of a reading on an instrument with a step: u = a/√12.
@@ -75,7 +75,7 @@ export function propagate(
  * @returns one sensitivity an input; 0 where the standard uncertainty is 0
  * @throws OutOfRangeError (a RangeError) when f answers with a number that is not finite
  * Range: steps that stay inside the range of f. Source: GUM 5.1.3, note 2.
- * @example sensitivitiesOf(([x = 0]) => x * x, [{ value: 3, standardUncertainty: 0.1 }])[0] // 6
+ * @example sensitivitiesOf(([x = 0]) => x * x, [{ value: 3, standardUncertainty: 0.1 }])[0] // 6.000000
  */
 export function sensitivitiesOf(
   f: (inputs: readonly number[]) => number,

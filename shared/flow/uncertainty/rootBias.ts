@@ -28,7 +28,7 @@ function shares(pressureAbsPa: number, pressureDropPa: number) {
  * @returns shares of the flow, above 0 when the root reads high (scaled up)
  * @throws OutOfRangeError (a RangeError) unless both drops lie between 0 and the absolute pressure
  * Range: drops to 60 inH2O. Source: ISO 5167-2:2003 eq. 5 and Heywood app. C; a known bias left in: GUM F.2.4.5.
- * @example rootBias(2490.8891, 6974.48948) // { plateRatio: 0.01145, nozzleRatio: 0.0252 }
+ * @example rootBias(2490.8891, 6974.48948) // { plateRatio: 0.01145, nozzleRatio: 0.0253 }
  */
 export function rootBias(testDropPa: number, standardDropPa: number, pressureAbsPa = 101325): RootBias {
   const test = shares(pressureAbsPa, testDropPa);

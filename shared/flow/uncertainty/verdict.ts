@@ -32,7 +32,7 @@ const needed: readonly PartName[] = ['repeat', 'setUp'];
  * @throws OutOfRangeError (a RangeError) when a budget lacks repeat or set-up, or the first figure is not above 0
  * Range: one figure declared before looking; twelve lifts judged one by one would shout in every second comparison of
  * equal ports. Source: JCGM 106:2012 for decision rules; ISO 5725-6 for the critical difference.
- * @example Number(verdictOn('mean', budgetOf(0.1, [{ name: 'repeat', sharedBy: 'reading', degreesOfFreedom: 9, contributionM3PerS: 0.001 }, { name: 'setUp', sharedBy: 'run', degreesOfFreedom: 9, contributionM3PerS: 0.001 }]), budgetOf(0.12, [{ name: 'repeat', sharedBy: 'reading', degreesOfFreedom: 9, contributionM3PerS: 0.001 }, { name: 'setUp', sharedBy: 'run', degreesOfFreedom: 9, contributionM3PerS: 0.001 }]), likeOnOneBench).verdict === 'larger') // 1
+ * @example verdictOn('mean', budgetOf(0.1, [{ name: 'repeat', sharedBy: 'reading', degreesOfFreedom: 9, contributionM3PerS: 0.001 }, { name: 'setUp', sharedBy: 'run', degreesOfFreedom: 9, contributionM3PerS: 0.001 }]), budgetOf(0.12, [{ name: 'repeat', sharedBy: 'reading', degreesOfFreedom: 9, contributionM3PerS: 0.001 }, { name: 'setUp', sharedBy: 'run', degreesOfFreedom: 9, contributionM3PerS: 0.001 }]), likeOnOneBench).verdict // 'larger'
  */
 export function verdictOn(figure: string, before: Budget, after: Budget, inCommon: InCommon): Verdict {
   for (const { parts } of [before, after])

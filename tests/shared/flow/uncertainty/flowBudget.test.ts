@@ -1,8 +1,8 @@
-import { fitLine, fitThroughZero } from '@/shared/flow/lineFit';
+import { fitLine, fitThroughZero } from '@/shared/flow/statistics/lineFit';
 import { budgetOf, partWords } from '@/shared/flow/uncertainty/budget';
 import { calibrationParts, referenceUncertaintyRatio } from '@/shared/flow/uncertainty/calibrationParts';
 import { flowBudget, statedSetUpRatio } from '@/shared/flow/uncertainty/flowBudget';
-import { sampleOf } from '@/shared/flow/sampleStatistics';
+import { sampleOf } from '@/shared/flow/statistics/sampleStatistics';
 import { flowBudgetInput } from '@/tests/factories/flowBudgetInput';
 import { seededRandom } from '@/tests/factories/seededRandom';
 

@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { flowCurve } from '@/shared/flow/flowCurve';
+import { flowCurve } from '@/shared/flow/curve/flowCurve';
 import { airDensityUncertaintyRatio } from '@/shared/flow/uncertainty/airUncertainty';
 import {
   effectiveFreedom,

@@ -1,6 +1,6 @@
-import { flowCurve, liftRangeWeights, meanFlow } from '@/shared/flow/flowCurve';
-import { fitLine } from '@/shared/flow/lineFit';
-import { pooledRelativeRepeatability, sampleOf } from '@/shared/flow/sampleStatistics';
+import { flowCurve, liftRangeWeights, meanFlow } from '@/shared/flow/curve/flowCurve';
+import { fitLine } from '@/shared/flow/statistics/lineFit';
+import { pooledRelativeRepeatability, sampleOf } from '@/shared/flow/statistics/sampleStatistics';
 import { type Budget, type Contribution, budgetOf } from '@/shared/flow/uncertainty/budget';
 import { type CalibrationKnown, calibrationParts } from '@/shared/flow/uncertainty/calibrationParts';
 import { differenceOf, likeOnOneBench } from '@/shared/flow/uncertainty/difference';

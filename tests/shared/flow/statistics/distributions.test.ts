@@ -6,8 +6,8 @@ import {
   normalQuantile,
   tCdf,
   tQuantile,
-} from '@/shared/flow/distributions';
-import { lnGamma, regularizedBeta, regularizedGammaQ } from '@/shared/flow/specialFunctions';
+} from '@/shared/flow/statistics/distributions';
+import { lnGamma, regularizedBeta, regularizedGammaQ } from '@/shared/flow/statistics/specialFunctions';
 import vectors from '@/tests/vectors/distributions.json';
 
 const functions: Record<string, (...args: number[]) => number> = {

@@ -4,7 +4,7 @@ import {
   powerFromFlow,
   speedAtMachIndex,
   usualPowerAssumptions,
-} from '@/shared/flow/engineEstimate';
+} from '@/shared/flow/figures/engineEstimate';
 import {
   benchVelocityMPerS,
   exhaustIntakeRatio,
@@ -13,7 +13,7 @@ import {
   machIndex,
   meanPistonSpeedMPerS,
   portToPortSpread,
-} from '@/shared/flow/runFigures';
+} from '@/shared/flow/figures/runFigures';
 import vectors from '@/tests/vectors/runFigures.json';
 
 const within = (got: number, expected: number, tolerance: number) =>

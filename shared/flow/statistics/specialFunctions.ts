@@ -1,4 +1,4 @@
-import { requireAboveZero, requireNotNegative } from '@/shared/flow/requireNumber';
+import { OutOfRangeError, positive, zeroOrMore } from '@/shared/units/outOfRange';
 
 /** Coefficients of Lanczos' series for g = 7, n = 9 (Godfrey's table). */
 const lanczos = [
@@ -9,12 +9,12 @@ const tiny = 1e-300;
 const mostSteps = 10_000;
 
 /** Logarithm of the gamma function, Lanczos' series: ln Γ(x) = ½ ln 2π + (x − ½) ln t − t + ln Σ, t = x + 6.5.
- * @param x argument, dimensionless @returns ln Γ(x), dimensionless @throws RangeError unless x is finite and above 0
+ * @param x argument, dimensionless @returns ln Γ(x), dimensionless @throws OutOfRangeError (a RangeError) unless x is finite and above 0
  * Range: x above 0; about 1e-14 relative. Source: C. Lanczos, SIAM J. Numer. Anal. B 1 (1964) 86.
  * @example lnGamma(10) // 12.801827480081
  */
 export function lnGamma(x: number): number {
-  requireAboveZero('argument of the gamma function', x);
+  positive(x, 'argument of the gamma function');
   if (x < 0.5) return Math.log(Math.PI / Math.sin(Math.PI * x)) - lnGamma(1 - x);
   const z = x - 1;
   const t = z + 7.5;
@@ -56,15 +56,16 @@ function betaFraction(x: number, a: number, b: number): number {
 
 /** Regularized incomplete beta function I_x(a, b), by its continued fraction on the side where that converges fast.
  * @param x upper end, 0..1 @param a first shape, above 0 @param b second shape, above 0
- * @returns 0..1, dimensionless @throws RangeError outside those ranges
+ * @returns 0..1, dimensionless @throws OutOfRangeError (a RangeError) outside those ranges
  * Range: checked for shapes from 0.5 to 5e5, about 1e-13 relative there.
  * Source: NIST Digital Library of Mathematical Functions 8.17.4 and 8.17.22.
  * @example regularizedBeta(0.25, 2, 3) // 0.26171875
  */
 export function regularizedBeta(x: number, a: number, b: number): number {
-  requireAboveZero('first shape', a);
-  requireAboveZero('second shape', b);
-  if (!(x >= 0 && x <= 1)) throw new RangeError('the argument of the beta function must lie in 0..1');
+  positive(a, 'first shape');
+  positive(b, 'second shape');
+  if (!(x >= 0 && x <= 1))
+    throw new OutOfRangeError('argument', 'The argument of the beta function must lie in 0..1.');
   if (x === 0 || x === 1) return x;
   const front = Math.exp(
     lnGammaStep(Math.max(a, b), Math.min(a, b)) -
@@ -79,13 +80,13 @@ export function regularizedBeta(x: number, a: number, b: number): number {
 
 /** Upper regularized incomplete gamma function Q(a, x) = Γ(a, x)/Γ(a): series below a + 1, continued fraction above.
  * @param a shape, above 0 @param x lower end, 0 or above
- * @returns 0..1, dimensionless @throws RangeError outside those ranges
+ * @returns 0..1, dimensionless @throws OutOfRangeError (a RangeError) outside those ranges
  * Range: checked for a from 0.5 to 200. Source: NIST DLMF 8.11.4 (series), 8.9.2 (fraction).
  * @example regularizedGammaQ(1, 2) // 0.135335283237
  */
 export function regularizedGammaQ(a: number, x: number): number {
-  requireAboveZero('shape', a);
-  requireNotNegative('argument of the gamma function', x);
+  positive(a, 'shape');
+  zeroOrMore(x, 'argument of the gamma function');
   if (x === 0) return 1;
   const front = Math.exp(a * Math.log(x) - x - lnGamma(a));
   if (x < a + 1) {

@@ -1,18 +1,20 @@
-import { tQuantile } from '@/shared/flow/distributions';
-import { requireProbability } from '@/shared/flow/requireNumber';
-import { sampleOf } from '@/shared/flow/sampleStatistics';
+import { tQuantile } from '@/shared/flow/statistics/distributions';
+import { requireProbability } from '@/shared/flow/statistics/requireProbability';
+import { OutOfRangeError } from '@/shared/units/outOfRange';
+import { sampleOf } from '@/shared/flow/statistics/sampleStatistics';
 
 /** Which end of a sample is asked about: one named before looking, or whichever is farther out. */
 export type GrubbsSide = 'highest' | 'lowest' | 'either';
 
 /** Critical value of Grubbs' statistic: G = (n − 1)/√n · √(t²/(n − 2 + t²)), t at α/n, or α/2n when either end is asked.
  * @param count n, 3 or more @param side which end @param significance α, 0..1
- * @returns G, dimensionless @throws RangeError for fewer than three values or a significance outside 0..1
+ * @returns G, dimensionless @throws OutOfRangeError (a RangeError) for fewer than three values or a significance outside 0..1
  * Range: normal samples, n from 3. Source: NIST/SEMATECH e-Handbook 1.3.5.17.1.
  * @example grubbsCritical(8, 'highest', 0.05) // 2.032
  */
 export function grubbsCritical(count: number, side: GrubbsSide, significance: number): number {
-  if (!(Number.isInteger(count) && count >= 3)) throw new RangeError('the test needs at least three values');
+  if (!(Number.isInteger(count) && count >= 3))
+    throw new OutOfRangeError('sample', 'The test needs at least three values.');
   requireProbability('significance', significance);
   const share = significance / (side === 'either' ? 2 * count : count);
   const t2 = tQuantile(1 - share, count - 2) ** 2;
@@ -31,9 +33,9 @@ export type GrubbsResult = {
 /** Grubbs' test for one outlier: G = max|x − x̄|/s against its critical value.
  * @param values three or more, one unit @param options `side`, either by default; `significance` 0..1, 0.05 by default
  * @returns statistic, critical value, place and verdict; values all alike give a statistic of 0 and no outlier
- * @throws RangeError for fewer than three values or one that is not finite
+ * @throws OutOfRangeError (a RangeError) for fewer than three values or one that is not finite
  * Range: normal but for the one value. Source: NIST/SEMATECH e-Handbook 1.3.5.17.1.
- * @example grubbs([199.31, 199.53, 200.19, 200.82, 201.92, 201.95, 202.18, 245.57], { side: 'highest' }).statistic // 2.4687
+ * @example grubbs([199.31, 199.53, 200.19, 200.82, 201.92, 201.95, 202.18, 245.57], { side: 'highest' }).statistic // 2.46876
  */
 export function grubbs(
   values: readonly number[],

@@ -1,28 +1,24 @@
-import {
-  requireDegreesOfFreedom,
-  requireFinite,
-  requireNotNegative,
-  requireProbability,
-} from '@/shared/flow/requireNumber';
-import { lnGamma, regularizedBeta, regularizedGammaQ } from '@/shared/flow/specialFunctions';
+import { requireDegreesOfFreedom, requireProbability } from '@/shared/flow/statistics/requireProbability';
+import { OutOfRangeError, finite, zeroOrMore } from '@/shared/units/outOfRange';
+import { lnGamma, regularizedBeta, regularizedGammaQ } from '@/shared/flow/statistics/specialFunctions';
 
 /** Above this many degrees of freedom the expansion about the normal distribution is good to 1e-10. */
 const many = 1e5;
 
 /** Probability below z of the standard normal distribution: Φ(z) = ½ Q(½, z²/2) for z < 0.
- * @param z standardized value, dimensionless, infinity allowed @returns probability 0..1 @throws RangeError for NaN
+ * @param z standardized value, dimensionless, infinity allowed @returns probability 0..1 @throws OutOfRangeError (a RangeError) for NaN
  * Range: every z. Source: NIST DLMF 7.18 with 8.11.4; e-Handbook 1.3.6.6.1.
  * @example normalCdf(1.96) // 0.9750021048518
  */
 export function normalCdf(z: number): number {
-  if (Number.isNaN(z)) throw new RangeError('a standardized value must be a number');
+  if (Number.isNaN(z)) throw new OutOfRangeError('argument', 'A standardized value must be a number.');
   if (!Number.isFinite(z)) return z > 0 ? 1 : 0;
   const tail = 0.5 * regularizedGammaQ(0.5, (z * z) / 2);
   return z > 0 ? 1 - tail : tail;
 }
 
 /** Value of the standard normal distribution below which the share p lies: Φ(z) = p, solved by bracketed Newton steps.
- * @param p probability, strictly between 0 and 1 @returns z, dimensionless @throws RangeError outside that range
+ * @param p probability, strictly between 0 and 1 @returns z, dimensionless @throws OutOfRangeError (a RangeError) outside that range
  * Range: 1e-12 to 1 − 1e-12. Source: inverse of normalCdf; e-Handbook table 1.3.6.7.1.
  * @example normalQuantile(0.975) // 1.95996398454
  */
@@ -35,13 +31,13 @@ export function normalQuantile(p: number): number {
 
 /** Probability below t of Student's distribution: 1 − ½ I_x(ν/2, ½) for t > 0, x = ν/(ν + t²).
  * @param t standardized value, dimensionless @param degreesOfFreedom ν, a count, fractions and infinity allowed
- * @returns probability 0..1 @throws RangeError unless t is finite and ν above 0
+ * @returns probability 0..1 @throws OutOfRangeError (a RangeError) unless t is finite and ν above 0
  * Range: ν from 0.1 upward. Source: NIST e-Handbook 1.3.6.6.4; DLMF 8.17;
  * above 1e5 degrees of freedom Abramowitz and Stegun 26.7.8.
  * @example tCdf(2.228138852, 10) // 0.975000000
  */
 export function tCdf(t: number, degreesOfFreedom: number): number {
-  requireFinite('t', t);
+  finite(t, 't');
   const nu = requireDegreesOfFreedom(degreesOfFreedom);
   if (nu > many) return normalCdf((t * (1 - 1 / (4 * nu))) / Math.sqrt(1 + (t * t) / (2 * nu)));
   // near t = 0 the other tail of the beta function keeps its digits
@@ -56,7 +52,7 @@ export function tCdf(t: number, degreesOfFreedom: number): number {
 /** Value of Student's distribution below which the share p lies (bracketed Newton steps on tCdf).
  * @param p probability, strictly between 0 and 1; 0.975 for a two-sided 95 % interval
  * @param degreesOfFreedom ν, a count, fractions and infinity allowed
- * @returns t, dimensionless @throws RangeError unless p lies in 0..1 and ν is above 0
+ * @returns t, dimensionless @throws OutOfRangeError (a RangeError) unless p lies in 0..1 and ν is above 0
  * Range: ν from 0.5, p from 1e-9 to 1 − 1e-9; 1e-10 relative. Source: NIST e-Handbook table 1.3.6.7.2;
  * above 1e5 degrees of freedom Abramowitz and Stegun 26.7.5.
  * @example tQuantile(0.975, 10) // 2.228138852
@@ -79,25 +75,25 @@ export function tQuantile(p: number, degreesOfFreedom: number): number {
 
 /** Probability below x of the chi-squared distribution: 1 − Q(ν/2, x/2).
  * @param x value, dimensionless, 0 or above @param degreesOfFreedom ν, a finite count
- * @returns probability 0..1 @throws RangeError outside those ranges
+ * @returns probability 0..1 @throws OutOfRangeError (a RangeError) outside those ranges
  * Range: ν from 1 to 400. Source: NIST e-Handbook 1.3.6.6.6.
  * @example chiSquaredCdf(9.487729, 4) // 0.950000
  */
 export function chiSquaredCdf(x: number, degreesOfFreedom: number): number {
-  requireNotNegative('chi-squared', x);
-  requireFinite('degrees of freedom', requireDegreesOfFreedom(degreesOfFreedom));
+  zeroOrMore(x, 'chi-squared');
+  finite(requireDegreesOfFreedom(degreesOfFreedom), 'degrees of freedom');
   return 1 - regularizedGammaQ(degreesOfFreedom / 2, x / 2);
 }
 
 /** Value of the chi-squared distribution below which the share p lies (bracketed Newton steps on chiSquaredCdf).
  * @param p probability, strictly between 0 and 1 @param degreesOfFreedom ν, a finite count
- * @returns chi-squared, dimensionless @throws RangeError outside those ranges
+ * @returns chi-squared, dimensionless @throws OutOfRangeError (a RangeError) outside those ranges
  * Range: ν from 1 to 400. Source: NIST e-Handbook table 1.3.6.7.4.
  * @example chiSquaredQuantile(0.95, 4) // 9.487729
  */
 export function chiSquaredQuantile(p: number, degreesOfFreedom: number): number {
   requireProbability('probability', p);
-  const nu = requireFinite('degrees of freedom', requireDegreesOfFreedom(degreesOfFreedom));
+  const nu = finite(requireDegreesOfFreedom(degreesOfFreedom), 'degrees of freedom');
   const norm = lnGamma(nu / 2) + (nu / 2) * Math.LN2;
   const density = (x: number) => (x > 0 ? Math.exp((nu / 2 - 1) * Math.log(x) - x / 2 - norm) : 0);
   let highest = nu + 1;

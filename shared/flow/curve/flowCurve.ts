@@ -1,4 +1,4 @@
-import { type LiftEvent } from '@/shared/flow/liftEvent';
+import { type LiftEvent } from '@/shared/flow/curve/liftEvent';
 import {
   type Pchip,
   hermiteIntegrals,
@@ -8,8 +8,8 @@ import {
   pchipSlopes,
   pchipValue,
   pieceAt,
-} from '@/shared/flow/pchip';
-import { requireNotNegative } from '@/shared/flow/requireNumber';
+} from '@/shared/flow/curve/pchip';
+import { OutOfRangeError, zeroOrMore } from '@/shared/units/outOfRange';
 
 /** Flow against lift of one run, m³/s over m. A closed valve flows nothing: lift 0 is added when it was not tested. */
 export type FlowCurve = Pchip & { hasAddedZero: boolean };
@@ -17,15 +17,15 @@ export type FlowCurve = Pchip & { hasAddedZero: boolean };
 /** Curve of a run: PCHIP through its lifts, with (0, 0) added when the lowest lift is above 0.
  * @param readings one or more, in any order: `liftM` in m, 0 or above, each once, and `flowM3PerS` in m³/s
  * @returns the curve, values in m³/s, slopes in m³/s per m
- * @throws RangeError for no reading, a negative lift, the same lift twice, or one point at lift 0 alone
+ * @throws OutOfRangeError (a RangeError) for no reading, a negative lift, the same lift twice, or one point at lift 0 alone
  * Range: leak subtracted, so that nothing flows at lift 0. Source: as pchipSlopes.
  * @example flowCurve([{ liftM: 1, flowM3PerS: 2 }]).ys[0] // 0
  */
 export function flowCurve(readings: readonly { liftM: number; flowM3PerS: number }[]): FlowCurve {
   const sorted = [...readings].sort((a, b) => a.liftM - b.liftM);
-  sorted.forEach(({ liftM }) => requireNotNegative('lift', liftM));
+  sorted.forEach(({ liftM }) => zeroOrMore(liftM, 'lift'));
   const lowest = sorted[0];
-  if (lowest === undefined) throw new RangeError('a curve needs at least one reading');
+  if (lowest === undefined) throw new OutOfRangeError('curve', 'A curve needs at least one reading.');
   const hasAddedZero = lowest.liftM > 0;
   const points = hasAddedZero ? [{ liftM: 0, flowM3PerS: 0 }, ...sorted] : sorted;
   const curve = pchip(
@@ -48,12 +48,12 @@ const sameLiftM = 1e-7;
 
 /** Flow at any lift, marked as tested, interpolated, or outside the tested lifts: pchipValue.
  * @param curve of a run @param liftM lift, m, 0 or above
- * @returns flow in m³/s with its mark and slope @throws RangeError for a negative lift or one that is not finite
+ * @returns flow in m³/s with its mark and slope @throws OutOfRangeError (a RangeError) for a negative lift or one that is not finite
  * Range: 0 to the highest tested lift; above it the answer is flagged, not guessed. Source: as pchipSlopes.
  * @example flowAtLift(flowCurve([{ liftM: 1, flowM3PerS: 2 }, { liftM: 2, flowM3PerS: 4 }]), 1.5).flowM3PerS // 3
  */
 export function flowAtLift(curve: FlowCurve, liftM: number): FlowAtLift {
-  requireNotNegative('lift', liftM);
+  zeroOrMore(liftM, 'lift');
   const tested = curve.xs.findIndex((x) => Math.abs(x - liftM) <= sameLiftM);
   if (tested >= 0)
     return {
@@ -96,12 +96,12 @@ function collector(count: number) {
 
 /** Weights of the mean over a lift range: (1/(L2 − L1))·∫Q dL, exact.
  * @param liftsM lifts of the curve (its xs), m @param fromM start, m @param toM end above the start, m
- * @returns the weights @throws RangeError when the range is empty or leaves the lifts of the curve
+ * @returns the weights @throws OutOfRangeError (a RangeError) when the range is empty or leaves the lifts of the curve
  * Range: inside the tested lifts. Source: pchipIntegral.
  * @example liftRangeWeights([0, 1, 2], 0, 2).valueWeights[1] // 0.5
  */
 export function liftRangeWeights(liftsM: readonly number[], fromM: number, toM: number): MeanWeights {
-  if (!(toM > fromM)) throw new RangeError('the lift range must end above its start');
+  if (!(toM > fromM)) throw new OutOfRangeError('curve', 'The lift range must end above its start.');
   const highest = liftsM.at(-1) ?? 0;
   // a range keyed in the unit of the lifts may differ from the last one by rounding
   const end = toM > highest && toM - highest <= sameLiftM ? highest : toM;
@@ -146,12 +146,12 @@ function crossing(event: LiftEvent, from: number, to: number, levelM: number): n
 /** Weights of the cam-weighted mean: ∫Q(L(θ))dθ/θ over the event, by Gauss's rule between the crossings of tested lifts.
  * @param liftsM lifts of the curve (its xs, the first 0), m @param event from liftEventOfLaw or liftEventOfTable
  * @returns the weights; above the highest tested lift the last flow is held and `heldShare` says for how much of the event
- * @throws RangeError unless the lifts begin at 0
+ * @throws OutOfRangeError (a RangeError) unless the lifts begin at 0
  * Range: quadrature to 1e-9. Source: definition; checked by closed forms (half sine and Q ∝ L: 2/π).
  * @example camWeights([0, 1], liftEventOfLaw('halfSine', 1)).heldShare // 0
  */
 export function camWeights(liftsM: readonly number[], event: LiftEvent): MeanWeights {
-  if (liftsM[0] !== 0) throw new RangeError('a cam-weighted mean needs the curve from lift 0');
+  if (liftsM[0] !== 0) throw new OutOfRangeError('curve', 'A cam-weighted mean needs the curve from lift 0.');
   const last = liftsM.length - 1;
   const highest = liftsM[last] ?? 0;
   const { valueWeights, slopeWeights, add } = collector(liftsM.length);
@@ -186,13 +186,13 @@ export function camWeights(liftsM: readonly number[], event: LiftEvent): MeanWei
 
 /** A mean of a curve by its weights: Σ a_i·y_i + Σ b_i·slope_i. It lies between the lowest and the highest flow.
  * @param curve with the lifts the weights were made for @param weights from liftRangeWeights or camWeights
- * @returns m³/s @throws RangeError when the numbers of lifts differ
+ * @returns m³/s @throws OutOfRangeError (a RangeError) when the numbers of lifts differ
  * Range: as the weights. Source: as the weights.
  * @example meanFlow(flowCurve([{ liftM: 1, flowM3PerS: 1 }]), camWeights([0, 1], liftEventOfLaw('halfSine', 1))) // 0.636619772
  */
 export function meanFlow(curve: Pchip, weights: MeanWeights): number {
   if (weights.valueWeights.length !== curve.xs.length)
-    throw new RangeError('the weights were made for other lifts');
+    throw new OutOfRangeError('curve', 'The weights were made for other lifts.');
   let sum = 0;
   curve.ys.forEach((y, i) => {
     sum += (weights.valueWeights[i] ?? 0) * y + (weights.slopeWeights[i] ?? 0) * (curve.slopes[i] ?? 0);
@@ -203,7 +203,7 @@ export function meanFlow(curve: Pchip, weights: MeanWeights): number {
 /** How much a mean moves with each flow of the curve: ∂mean/∂y_i, the slopes' share by central differences of 1e-6.
  * @param curve with the lifts the weights were made for @param weights from liftRangeWeights or camWeights
  * @returns one number a point of the curve (an added zero included), dimensionless; they sum with y_i to the mean
- * @throws RangeError when the numbers of lifts differ
+ * @throws OutOfRangeError (a RangeError) when the numbers of lifts differ
  * Range: small changes; at a kink of the slopes the mean of both sides. Source: GUM 5.1.3.
  * @example meanSensitivities(flowCurve([{ liftM: 1, flowM3PerS: 1 }]), liftRangeWeights([0, 1], 0, 1))[1] // 0.5
  */

@@ -4,8 +4,8 @@
  * adjustment. Invariants: limits never narrower than the resolution; below 15 points the stated tolerance governs,
  * because limits from few points cry wolf (5.8 % false alarms a check from 5 points).
  */
-import { normalCdf, tQuantile } from '@/shared/flow/distributions';
-import { requireAboveZero, requireFinite, requireNotNegative } from '@/shared/flow/requireNumber';
+import { normalCdf, tQuantile } from '@/shared/flow/statistics/distributions';
+import { OutOfRangeError, finite, positive, zeroOrMore } from '@/shared/units/outOfRange';
 
 /** E|difference of two values|/σ for normal values: 2/√π, as printed 1.128. */
 const movingRangePerSd = 1.128;
@@ -17,13 +17,13 @@ export type IndividualsLimits = ChartLimits & { movingRangeMean: number; sd: num
 
 /** Individuals chart: centre x̄, limits x̄ ± 3·MR̄/1.128, MR̄ the mean of |x_i − x_(i−1)|.
  * @param values two or more, oldest first, one unit @returns centre, limits, MR̄ and MR̄/1.128 in that unit
- * @throws RangeError for fewer than two values or one that is not finite
+ * @throws OutOfRangeError (a RangeError) for fewer than two values or one that is not finite
  * Range: independent points; honest from about 15 on. Source: NIST/SEMATECH e-Handbook 6.3.2.2.
  * @example individualsLimits([49.6, 47.6, 49.9, 51.3, 47.8, 51.2, 52.6, 52.4, 53.6, 52.1]).upper // 55.8041
  */
 export function individualsLimits(values: readonly number[]): IndividualsLimits {
-  if (values.length < 2) throw new RangeError('a chart needs at least two points');
-  values.forEach((value) => requireFinite('point', value));
+  if (values.length < 2) throw new OutOfRangeError('points', 'A chart needs at least two points.');
+  values.forEach((value) => finite(value, 'point'));
   const centre = values.reduce((sum, value) => sum + value, 0) / values.length;
   let ranges = 0;
   values.forEach((value, i) => {
@@ -37,12 +37,13 @@ export function individualsLimits(values: readonly number[]): IndividualsLimits 
 /** Degrees of freedom of a spread taken from the mean moving range: ν = 1/(2·CV²), CV from the variance of |d| and the
  * covariance of neighbours, both of normal values.
  * @param count number of points, 2 or more @returns ν, a count (about 0.6 per point)
- * @throws RangeError for fewer than two points
+ * @throws OutOfRangeError (a RangeError) for fewer than two points
  * Range: independent normal points. Source: derived from E|d1·d2| of a bivariate normal pair with correlation −½.
- * @example movingRangeFreedom(15) // 8.79
+ * @example movingRangeFreedom(15) // 8.66
  */
 export function movingRangeFreedom(count: number): number {
-  if (!(Number.isInteger(count) && count >= 2)) throw new RangeError('a moving range needs two points');
+  if (!(Number.isInteger(count) && count >= 2))
+    throw new OutOfRangeError('points', 'A moving range needs two points.');
   const ranges = count - 1;
   const squaredMean = 4 / Math.PI;
   const variance = 2 - squaredMean;
@@ -61,7 +62,7 @@ export type CheckLimits = ChartLimits & {
  * From 15 on: mean ± t·(MR̄/1.128)·√(1 + 1/n), t at the probability of 3 σ (0.27 % outside). Never narrower than one step.
  * @param history earlier checks, oldest first @param given in the same unit: `reference` its known flow, `tolerance` half
  *   width above 0, `resolution` step of the instrument, 0 or above
- * @returns limits in that unit, and what governed them @throws RangeError for numbers outside those ranges
+ * @returns limits in that unit, and what governed them @throws OutOfRangeError (a RangeError) for numbers outside those ranges
  * Range: one point a set-up or day. Source: individualsLimits; prediction interval of e-Handbook 4.5.1.2.
  * @example checkLimits([200, 202], { reference: 200, tolerance: 3, resolution: 1 }).upper // 204
  */
@@ -69,10 +70,10 @@ export function checkLimits(
   history: readonly number[],
   given: { reference: number; tolerance: number; resolution: number },
 ): CheckLimits {
-  requireFinite('reference', given.reference);
-  requireAboveZero('tolerance', given.tolerance);
-  requireNotNegative('resolution', given.resolution);
-  history.forEach((value) => requireFinite('point', value));
+  finite(given.reference, 'reference');
+  positive(given.tolerance, 'tolerance');
+  zeroOrMore(given.resolution, 'resolution');
+  history.forEach((value) => finite(value, 'point'));
   const count = history.length;
   if (count < enoughPoints) {
     const centre = count === 0 ? given.reference : history.reduce((sum, value) => sum + value, 0) / count;
@@ -106,16 +107,16 @@ export type CheckVerdict = { isSteady: boolean; isRight: boolean; limits: CheckL
  * reference: |x − reference| ≤ tolerance.
  * @param value the new check @param history earlier ones, without it, oldest first
  * @param given `reference`, `tolerance`, `resolution` as checkLimits, the same unit
- * @returns both verdicts and the limits @throws RangeError as checkLimits
+ * @returns both verdicts and the limits @throws OutOfRangeError (a RangeError) as checkLimits
  * Range: as checkLimits. Source: as checkLimits.
- * @example Number(judgeCheck(204.5, [200, 202], { reference: 200, tolerance: 3, resolution: 1 }).isSteady) // 0
+ * @example judgeCheck(204.5, [200, 202], { reference: 200, tolerance: 3, resolution: 1 }).isSteady // false
  */
 export function judgeCheck(
   value: number,
   history: readonly number[],
   given: { reference: number; tolerance: number; resolution: number },
 ): CheckVerdict {
-  requireFinite('check', value);
+  finite(value, 'check');
   const limits = checkLimits(history, given);
   return {
     isSteady: value >= limits.lower && value <= limits.upper,
@@ -137,7 +138,7 @@ export type EwmaChart = {
 /** EWMA chart, which sees a slow drift: z_i = λx_i + (1 − λ)z_(i−1), z_0 = target; limits target ± L·s·√(λ/(2 − λ)).
  * @param values oldest first, one unit @param given same unit: `target`, `sd` of a single point (0 or above);
  *   `lambda` 0..1, 0.3 by default; `widthInSd` L, 3 by default; `resolution` floor of the half width, 0 by default
- * @returns averages, limits and the places outside them @throws RangeError for numbers outside those ranges
+ * @returns averages, limits and the places outside them @throws OutOfRangeError (a RangeError) for numbers outside those ranges
  * Range: independent points. Source: NIST/SEMATECH e-Handbook 6.3.2.4.
  * @example ewmaChart([52, 47, 53], { target: 50, sd: 2.0539 }).averages[2] // 50.56
  */
@@ -145,14 +146,14 @@ export function ewmaChart(
   values: readonly number[],
   given: { target: number; sd: number; lambda?: number; widthInSd?: number; resolution?: number },
 ): EwmaChart {
-  const centre = requireFinite('target', given.target);
+  const centre = finite(given.target, 'target');
   const lambda = given.lambda ?? 0.3;
-  if (!(lambda > 0 && lambda <= 1)) throw new RangeError('lambda must lie in 0..1');
-  const width = requireAboveZero('width', given.widthInSd ?? 3);
-  const own = width * requireNotNegative('standard deviation', given.sd) * Math.sqrt(lambda / (2 - lambda));
-  const half = Math.max(own, requireNotNegative('resolution', given.resolution ?? 0));
+  if (!(lambda > 0 && lambda <= 1)) throw new OutOfRangeError('lambda', 'Lambda must lie in 0..1.');
+  const width = positive(given.widthInSd ?? 3, 'width');
+  const own = width * zeroOrMore(given.sd, 'standard deviation') * Math.sqrt(lambda / (2 - lambda));
+  const half = Math.max(own, zeroOrMore(given.resolution ?? 0, 'resolution'));
   let z = centre;
-  const averages = values.map((value) => (z = lambda * requireFinite('point', value) + (1 - lambda) * z));
+  const averages = values.map((value) => (z = lambda * finite(value, 'point') + (1 - lambda) * z));
   const outside = averages.flatMap((average, i) => (Math.abs(average - centre) > half ? [i] : []));
   return { averages, centre, lower: centre - half, upper: centre + half, outside };
 }

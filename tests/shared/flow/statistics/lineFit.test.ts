@@ -7,7 +7,7 @@ import {
   fitThroughZero,
   predictionInterval,
   valueOnLine,
-} from '@/shared/flow/lineFit';
+} from '@/shared/flow/statistics/lineFit';
 import vectors from '@/tests/vectors/lineFits.json';
 
 const fits = { fitLine, fitThroughZero } as Record<string, (points: readonly FitPoint[]) => Fit>;

@@ -2,8 +2,8 @@
  * Power and speed from flow. These are **estimates**: every result carries its assumptions, which stand beside the
  * figure and can be changed. Whether they are shown at all is the screen's business (off by default).
  */
-import { type MachIndexInput, machIndex, meanPistonSpeedMPerS } from '@/shared/flow/runFigures';
-import { requireAboveZero, requireNotNegative } from '@/shared/flow/requireNumber';
+import { type MachIndexInput, machIndex, meanPistonSpeedMPerS } from '@/shared/flow/figures/runFigures';
+import { positive, zeroOrMore } from '@/shared/units/outOfRange';
 
 /** One assumption behind an estimate, in SI, with the sentence that stands beside the figure. */
 export type Assumption = { name: string; value: number; unit: string; sentence: string };
@@ -31,9 +31,9 @@ export const usualPowerAssumptions: PowerAssumptions = {
 export type PowerEstimate = { powerW: number; flowAt28M3PerS: number; assumptions: Assumption[] };
 
 function requireAssumptions(given: PowerAssumptions): PowerAssumptions {
-  requireAboveZero('share of the flow', given.captureShare);
-  requireAboveZero('air per work', given.airPerWorkKgPerJ);
-  requireAboveZero('density', given.densityKgPerM3);
+  positive(given.captureShare, 'share of the flow');
+  positive(given.airPerWorkKgPerJ, 'air per work');
+  positive(given.densityKgPerM3, 'density');
   return given;
 }
 
@@ -70,7 +70,7 @@ function assumptionsOf(given: PowerAssumptions, cylinders: number, testDropPa: n
 /** Power that a flow can feed: P = n·Q28·ρ·k/BSAC, Q28 = Q·√(p28/p).
  * @param flowM3PerS flow of one cylinder's intake, m³/s, 0 or above @param testDropPa pressure that flow is stated at, Pa
  * @param cylinders how many alike, 1 or more @param assumptions k (0..1), BSAC (kg/J), density (kg/m³)
- * @returns power in W with its assumptions @throws RangeError for numbers outside those ranges
+ * @returns power in W with its assumptions @throws OutOfRangeError (a RangeError) for numbers outside those ranges
  * Range: tuned four-stroke petrol engines at the speed where the port is the limit; an estimate.
  * Source: air balance; constants are practice, 0.257 hp per cfm at 28 inH2O and cylinder with the usual ones.
  * @example powerFromFlow(0.0004719474432, 6974.48948, 1).powerW // 192.1
@@ -81,10 +81,9 @@ export function powerFromFlow(
   cylinders: number,
   assumptions: PowerAssumptions = usualPowerAssumptions,
 ): PowerEstimate {
-  requireNotNegative('flow', flowM3PerS);
-  requireAboveZero('number of cylinders', cylinders);
-  const flowAt28M3PerS =
-    flowM3PerS * Math.sqrt(tradePressurePa / requireAboveZero('test pressure', testDropPa));
+  zeroOrMore(flowM3PerS, 'flow');
+  positive(cylinders, 'number of cylinders');
+  const flowAt28M3PerS = flowM3PerS * Math.sqrt(tradePressurePa / positive(testDropPa, 'test pressure'));
   return {
     powerW: flowAt28M3PerS * wattsPerFlow(requireAssumptions(assumptions), cylinders),
     flowAt28M3PerS,
@@ -95,7 +94,7 @@ export function powerFromFlow(
 /** Flow of one intake that a power asks for: powerFromFlow turned round, Q = P·BSAC/(n·ρ·k)·√(p/p28).
  * @param powerW power, W, 0 or above @param testDropPa pressure the flow is to be stated at, Pa
  * @param cylinders how many alike, 1 or more @param assumptions k (0..1), BSAC (kg/J), density (kg/m³)
- * @returns flow in m³/s with its assumptions @throws RangeError for numbers outside those ranges
+ * @returns flow in m³/s with its assumptions @throws OutOfRangeError (a RangeError) for numbers outside those ranges
  * Range: as powerFromFlow. Source: as powerFromFlow.
  * @example flowForPower(powerFromFlow(0.1, 2490.8891, 8).powerW, 2490.8891, 8).flowM3PerS // 0.1
  */
@@ -105,11 +104,11 @@ export function flowForPower(
   cylinders: number,
   assumptions: PowerAssumptions = usualPowerAssumptions,
 ): { flowM3PerS: number; assumptions: Assumption[] } {
-  requireNotNegative('power', powerW);
-  requireAboveZero('number of cylinders', cylinders);
+  zeroOrMore(powerW, 'power');
+  positive(cylinders, 'number of cylinders');
   const at28 = powerW / wattsPerFlow(requireAssumptions(assumptions), cylinders);
   return {
-    flowM3PerS: at28 * Math.sqrt(requireAboveZero('test pressure', testDropPa) / tradePressurePa),
+    flowM3PerS: at28 * Math.sqrt(positive(testDropPa, 'test pressure') / tradePressurePa),
     assumptions: assumptionsOf(assumptions, cylinders, testDropPa),
   };
 }
@@ -119,12 +118,12 @@ export type SpeedEstimate = { speedPerS: number; machIndex: number; assumptions:
 /** Engine speed at which the inlet reaches a Mach index: N = Z·n·Ci·a·(Dv/B)²/(2·S).
  * @param input bore, valve, count, mean flow coefficient, speed of sound, as machIndex @param strokeM stroke, m
  * @param limit Mach index, dimensionless, 0.6 by default
- * @returns speed in turns per second with its assumptions @throws RangeError unless every number is above 0
+ * @returns speed in turns per second with its assumptions @throws OutOfRangeError (a RangeError) unless every number is above 0
  * Range: "Mach index 0.6 near N rpm"; the fall of breathing is gradual. Source: as machIndex.
- * @example speedAtMachIndex({ boreM: 0.1016, valveDiameterM: 0.051308, meanFlowCoefficient: 0.35, soundSpeedMPerS: 343.2338 }, 0.088392).speedPerS * 60 // 6238.791
+ * @example speedAtMachIndex({ boreM: 0.1016, valveDiameterM: 0.051308, meanFlowCoefficient: 0.35, soundSpeedMPerS: 343.2338 }, 0.088392).speedPerS * 60 // 6238.79
  */
 export function speedAtMachIndex(input: MachIndexInput, strokeM: number, limit = 0.6): SpeedEstimate {
-  requireAboveZero('Mach index', limit);
+  positive(limit, 'Mach index');
   const speedPerS = limit / machIndex(input, meanPistonSpeedMPerS(strokeM, 1));
   const assumptions: Assumption[] = [
     {

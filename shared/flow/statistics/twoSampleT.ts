@@ -1,6 +1,7 @@
-import { tCdf, tQuantile } from '@/shared/flow/distributions';
-import { requireProbability } from '@/shared/flow/requireNumber';
-import { sampleOf } from '@/shared/flow/sampleStatistics';
+import { tCdf, tQuantile } from '@/shared/flow/statistics/distributions';
+import { requireProbability } from '@/shared/flow/statistics/requireProbability';
+import { OutOfRangeError } from '@/shared/units/outOfRange';
+import { sampleOf } from '@/shared/flow/statistics/sampleStatistics';
 
 export type TwoSampleT = {
   /** mean of the first less mean of the second, in the unit of the values */
@@ -20,7 +21,7 @@ export type TwoSampleT = {
  * @param first two values or more @param second two values or more, the same unit
  * @param options `equalSpread` pools the spreads (ν = n1 + n2 − 2), otherwise Welch-Satterthwaite; `level` 0..1, 0.95
  * @returns t, ν, critical value and verdict
- * @throws RangeError when a sample has fewer than two values, or neither sample spreads
+ * @throws OutOfRangeError (a RangeError) when a sample has fewer than two values, or neither sample spreads
  * Range: roughly normal samples. Source: NIST/SEMATECH e-Handbook 1.3.5.3.
  * @example twoSampleT([5, 7, 9], [1, 2, 3], { equalSpread: true }).t // 3.8729833
  */
@@ -33,11 +34,11 @@ export function twoSampleT(
   const a = sampleOf(first);
   const b = sampleOf(second);
   if (a.standardDeviation === null || b.standardDeviation === null)
-    throw new RangeError('each sample needs at least two values');
+    throw new OutOfRangeError('sample', 'Each sample needs at least two values.');
   const va = a.standardDeviation ** 2 / a.count;
   const vb = b.standardDeviation ** 2 / b.count;
   if (va + vb === 0)
-    throw new RangeError('neither sample spreads: there is nothing to judge a difference by');
+    throw new OutOfRangeError('sample', 'Neither sample spreads: there is nothing to judge a difference by.');
   const pooled = a.count + b.count - 2;
   const pooledVariance =
     ((a.count - 1) * a.standardDeviation ** 2 + (b.count - 1) * b.standardDeviation ** 2) / pooled;

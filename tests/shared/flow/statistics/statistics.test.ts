@@ -6,10 +6,14 @@ import {
   individualsLimits,
   judgeCheck,
   movingRangeFreedom,
-} from '@/shared/flow/controlChart';
-import { grubbs, grubbsCritical } from '@/shared/flow/grubbs';
-import { pooledRelativeRepeatability, pooledRepeatability, sampleOf } from '@/shared/flow/sampleStatistics';
-import { twoSampleT } from '@/shared/flow/twoSampleT';
+} from '@/shared/flow/statistics/controlChart';
+import { grubbs, grubbsCritical } from '@/shared/flow/statistics/grubbs';
+import {
+  pooledRelativeRepeatability,
+  pooledRepeatability,
+  sampleOf,
+} from '@/shared/flow/statistics/sampleStatistics';
+import { twoSampleT } from '@/shared/flow/statistics/twoSampleT';
 import { seededRandom } from '@/tests/factories/seededRandom';
 import vectors from '@/tests/vectors/statistics.json';
 

@@ -1,4 +1,4 @@
-import { requireFinite } from '@/shared/flow/requireNumber';
+import { OutOfRangeError, finite } from '@/shared/units/outOfRange';
 
 /** A curve through points that never swings past them: cubic pieces, one slope a point. */
 export type Pchip = { xs: readonly number[]; ys: readonly number[]; slopes: readonly number[] };
@@ -15,22 +15,22 @@ function endSlope(h0: number, h1: number, secant0: number, secant1: number): num
 /** Slopes of the shape-keeping curve: inside the weighted harmonic mean of the two secants, 0 where they change sign;
  * (w1 + w2)/(w1/δ1 + w2/δ2), w1 = 2h2 + h1, w2 = h2 + 2h1; at the ends the held three-point formula.
  * @param xs two or more, rising, any unit @param ys as many, any unit @returns slopes, unit of y per unit of x
- * @throws RangeError unless the lists match, x rises and every number is finite
+ * @throws OutOfRangeError (a RangeError) unless the lists match, x rises and every number is finite
  * Range: any rising x. Source: Fritsch and Carlson, SIAM J. Numer. Anal. 17 (1980) 238; Fritsch and Butland, SIAM J. Sci.
  * Stat. Comput. 5 (1984) 300; end conditions as SciPy's PchipInterpolator.
  * @example pchipSlopes([0, 1, 2], [0, 1, 4])[1] // 1.5
  */
 export function pchipSlopes(xs: readonly number[], ys: readonly number[]): number[] {
   if (xs.length < 2 || xs.length !== ys.length)
-    throw new RangeError('a curve needs two points or more, with a value each');
+    throw new OutOfRangeError('curve', 'A curve needs two points or more, with a value each.');
   const widths: number[] = [];
   const secants: number[] = [];
   xs.forEach((x, i) => {
-    requireFinite('x', x);
-    const y = requireFinite('y', ys[i] ?? Number.NaN);
+    finite(x, 'x');
+    const y = finite(ys[i] ?? Number.NaN, 'y');
     if (i === 0) return;
     const width = x - (xs[i - 1] ?? x);
-    if (!(width > 0)) throw new RangeError('the x of a curve must rise');
+    if (!(width > 0)) throw new OutOfRangeError('curve', 'The x of a curve must rise.');
     widths.push(width);
     secants.push((y - (ys[i - 1] ?? y)) / width);
   });
@@ -52,7 +52,7 @@ export function pchipSlopes(xs: readonly number[], ys: readonly number[]): numbe
 
 /** Curve through points by pchipSlopes.
  * @param xs two or more, rising, any unit @param ys as many, any unit
- * @returns the curve @throws RangeError as pchipSlopes
+ * @returns the curve @throws OutOfRangeError (a RangeError) as pchipSlopes
  * Range: any rising x. Source: as pchipSlopes.
  * @example pchip([0, 1, 2], [0, 1, 4]).slopes[1] // 1.5
  */
@@ -62,14 +62,14 @@ export function pchip(xs: readonly number[], ys: readonly number[]): Pchip {
 
 /** Place of the piece that holds x: the i with x_i ≤ x < x_(i+1), the last piece for its end.
  * @param xs rising, two or more @param x inside them, same unit @returns place, a count from 0
- * @throws RangeError when x lies outside
+ * @throws OutOfRangeError (a RangeError) when x lies outside
  * Range: inside the points. Source: binary search.
  * @example pieceAt([0, 1, 2, 4], 2.5) // 2
  */
 export function pieceAt(xs: readonly number[], x: number): number {
   const last = xs.length - 1;
   if (!(x >= (xs[0] ?? Number.NaN) && x <= (xs[last] ?? Number.NaN)))
-    throw new RangeError('outside the points of the curve');
+    throw new OutOfRangeError('curve', 'Outside the points of the curve.');
   let low = 0;
   let high = last;
   while (high - low > 1) {
@@ -112,7 +112,7 @@ export function hermiteIntegrals(s: number, h: number): [number, number, number,
 
 /** Value of a curve: Σ of hermiteShapes times values and slopes of the piece's ends.
  * @param curve from pchip @param x inside its points, unit of x
- * @returns y, in the unit of the values @throws RangeError when x lies outside: a curve is not drawn on past its points
+ * @returns y, in the unit of the values @throws OutOfRangeError (a RangeError) when x lies outside: a curve is not drawn on past its points
  * Range: inside the points. Source: as pchipSlopes.
  * @example pchipValue(pchip([0, 0.05, 0.1, 0.2, 0.3, 0.4, 0.5, 0.6], [0, 32, 64, 125, 178, 215, 237, 246]), 0.15) // 95.2389647
  */
@@ -127,7 +127,7 @@ export function pchipValue(curve: Pchip, x: number): number {
 
 /** Slope of a curve: dy/dx = (6s² − 6s)(y0 − y1)/h + (3s² − 4s + 1)slope0 + (3s² − 2s)slope1.
  * @param curve from pchip @param x inside its points, unit of x
- * @returns unit of y per unit of x @throws RangeError when x lies outside
+ * @returns unit of y per unit of x @throws OutOfRangeError (a RangeError) when x lies outside
  * Range: inside the points. Source: pchipValue, differentiated.
  * @example pchipSlope(pchip([0, 1, 2], [0, 1, 4]), 1) // 1.5
  */
@@ -147,7 +147,7 @@ export function pchipSlope(curve: Pchip, x: number): number {
 
 /** Exact integral of a curve from one x to another: Σ of hermiteIntegrals over the pieces between.
  * @param curve from pchip @param from inside its points, unit of x @param to inside its points, either side of `from`
- * @returns unit of y times unit of x, negative when `to` lies below `from` @throws RangeError when an end lies outside
+ * @returns unit of y times unit of x, negative when `to` lies below `from` @throws OutOfRangeError (a RangeError) when an end lies outside
  * Range: inside the points. Source: pchipValue, integrated.
  * @example pchipIntegral(pchip([0, 0.05, 0.1, 0.2, 0.3, 0.4, 0.5, 0.6], [0, 32, 64, 125, 178, 215, 237, 246]), 0, 0.6) // 94.70394385
  */

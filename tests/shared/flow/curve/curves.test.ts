@@ -6,8 +6,8 @@ import {
   liftRangeWeights,
   meanFlow,
   meanSensitivities,
-} from '@/shared/flow/flowCurve';
-import { type LiftLaw, liftEventOfLaw, liftEventOfTable } from '@/shared/flow/liftEvent';
+} from '@/shared/flow/curve/flowCurve';
+import { type LiftLaw, liftEventOfLaw, liftEventOfTable } from '@/shared/flow/curve/liftEvent';
 import {
   hermiteIntegrals,
   hermiteShapes,
@@ -17,7 +17,7 @@ import {
   pchipSlopes,
   pchipValue,
   pieceAt,
-} from '@/shared/flow/pchip';
+} from '@/shared/flow/curve/pchip';
 import vectors from '@/tests/vectors/curves.json';
 
 const within = (got: number, expected: number, tolerance: number) =>
