@@ -83,11 +83,16 @@ export class RealBrowser {
       fs.rmSync(path.join(this.profile, lock), { force: true });
   }
 
-  /** Ends the browser and removes its profile. What stood on its screens last stays as pictures, for a test that failed. */
+  /** Ends the browser and removes its profile. What stood on its last screen stays as a picture, for a test that failed. */
   async dispose(): Promise<void> {
-    const folder = path.resolve(__dirname, '../../../artifacts/pictures/last');
-    for (const [at, page] of (this.browser?.contexts()[0]?.pages() ?? []).entries())
-      await page.screenshot({ path: path.join(folder, `${this.name}-${at}.png`) }).catch(() => undefined);
+    const file = path.resolve(__dirname, '../../../artifacts/pictures/last', `${this.name}.png`);
+    // a tab in the background draws nothing, and waiting for it would hold the test up
+    await this.browser
+      ?.contexts()[0]
+      ?.pages()
+      .at(-1)
+      ?.screenshot({ path: file, timeout: 3000 })
+      .catch(() => undefined);
     await this.kill();
     fs.rmSync(this.profile, { recursive: true, force: true, maxRetries: 5, retryDelay: 200 });
   }
