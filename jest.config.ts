@@ -53,6 +53,7 @@ const config: Config = {
       ...inNode,
       ...withCluster,
       runner: '<rootDir>/tests/serialRunner.cjs',
+      setupFilesAfterEnv: ['<rootDir>/tests/e2e/support/patience.ts'],
       testMatch: ['<rootDir>/tests/e2e/**/*.test.ts'],
     },
   ],
