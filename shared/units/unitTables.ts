@@ -48,7 +48,8 @@ export function unitsOf(kind: QuantityKind): string[] {
 }
 
 function factorOf(kind: QuantityKind, unit: string): number {
-  const factor = Object.entries(unitTables[kind]).find(([name]) => name === unit)?.[1];
+  const table: Readonly<Record<string, number>> = unitTables[kind];
+  const factor = Object.hasOwn(table, unit) ? table[unit] : undefined;
   if (factor === undefined) throw new OutOfRangeError('unit', `${unit} is not a unit of this quantity.`);
   return factor;
 }

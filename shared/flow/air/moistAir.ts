@@ -35,6 +35,24 @@ function compressibility(pressureAbsPa: number, temperatureK: number, vapourRati
   return 1 - pOverT * first + pOverT * pOverT * (1.83e-11 - 0.765e-8 * x * x);
 }
 
+function saturated(
+  pressureAbsPa: number,
+  temperatureK: number,
+): { saturationPa: number; enhancementRatio: number } {
+  const t = temperatureK - 273.15;
+  const saturationPa = Math.exp(
+    1.2378847e-5 * temperatureK ** 2 - 1.9121316e-2 * temperatureK + 33.93711047 - 6343.1645 / temperatureK,
+  );
+  return { saturationPa, enhancementRatio: 1.00062 + 3.14e-8 * pressureAbsPa + 5.6e-7 * t * t };
+}
+
+function checked(state: AirState): AirState {
+  between(state.pressureAbsPa, 20e3, 200e3, 'absolute pressure in Pa');
+  between(state.temperatureK, 233.15, 373.15, 'temperature in kelvin');
+  between(state.humidityRatio, 0, 1, 'relative humidity');
+  return state;
+}
+
 /** Humid air by CIPM-2007: ρ = p Ma/(Z R T) · [1 − xv (1 − Mv/Ma)], with xv = h f psv / p.
  * @param state.pressureAbsPa absolute pressure, Pa @param state.temperatureK temperature, K
  * @param state.humidityRatio relative humidity, 0..1
@@ -46,14 +64,9 @@ function compressibility(pressureAbsPa: number, temperatureK: number, vapourRati
  * @example moistAir({ pressureAbsPa: 101325, temperatureK: 293.15, humidityRatio: 0.5 }) // { densityKgPerM3: 1.1993139 }
  */
 export function moistAir(state: AirState): MoistAir {
-  const p = between(state.pressureAbsPa, 20e3, 200e3, 'absolute pressure in Pa');
-  const temperatureK = between(state.temperatureK, 233.15, 373.15, 'temperature in kelvin');
-  const h = between(state.humidityRatio, 0, 1, 'relative humidity');
+  const { pressureAbsPa: p, temperatureK, humidityRatio: h } = checked(state);
   const t = temperatureK - 273.15;
-  const saturationPa = Math.exp(
-    1.2378847e-5 * temperatureK ** 2 - 1.9121316e-2 * temperatureK + 33.93711047 - 6343.1645 / temperatureK,
-  );
-  const enhancementRatio = 1.00062 + 3.14e-8 * p + 5.6e-7 * t * t;
+  const { saturationPa, enhancementRatio } = saturated(p, temperatureK);
   const vapourRatio = between((h * enhancementRatio * saturationPa) / p, 0, 0.5, 'share of water vapour');
   const z = compressibility(p, temperatureK, vapourRatio);
   const densityKgPerM3 =
@@ -96,7 +109,11 @@ export function carriedHumidityRatio(
   room: AirState,
   place: { pressureAbsPa: number; temperatureK: number },
 ): number {
-  const there = moistAir({ ...place, humidityRatio: 0 });
-  const wanted = moistAir(room).vapourRatio * place.pressureAbsPa;
-  return Math.min(1, wanted / (there.enhancementRatio * there.saturationPa));
+  const here = checked(room);
+  checked({ ...place, humidityRatio: 0 });
+  const from = saturated(here.pressureAbsPa, here.temperatureK);
+  const there = saturated(place.pressureAbsPa, place.temperatureK);
+  const vapourPa = here.humidityRatio * from.enhancementRatio * from.saturationPa;
+  const carriedPa = (vapourPa * place.pressureAbsPa) / here.pressureAbsPa;
+  return Math.min(1, carriedPa / (there.enhancementRatio * there.saturationPa));
 }

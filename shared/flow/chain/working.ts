@@ -1,4 +1,4 @@
-import { elementState, inletState } from '@/shared/flow/element/inletState';
+import { isAtInlet } from '@/shared/flow/element/inletState';
 import { OutOfRangeError, positive } from '@/shared/units/outOfRange';
 import type { ChainContext, ChainReading, ChainStep, Working } from './chainTypes';
 import { airStep, leakStep, testPressureStep } from './flowSteps';
@@ -103,18 +103,15 @@ function measuredEnd(
   say: Speech,
   take: (step: ChainStep) => void,
 ): End {
-  const { pressureDropPa } = inlet;
+  const { pressureDropPa, state } = inlet;
   if (pressureDropPa <= 0)
     throw new OutOfRangeError('test pressure', 'At a test pressure of zero there is nothing to correct by.');
   const afterLeak = leakStep(inlet.flowM3PerS, pressureDropPa, leakOf(context, say), say);
   take(afterLeak);
-  const state = inletState(inlet.air);
   const scaled = testPressureStep(afterLeak.value, pressureDropPa, standardPa, say);
   take(scaled);
   const { element, place } = context.bench;
-  const cancels =
-    (element === 'orificeFlow' || element === 'pitot') &&
-    elementState(inlet.air, place).densityKgPerM3 === state.densityKgPerM3;
+  const cancels = (element === 'orificeFlow' || element === 'pitot') && isAtInlet(context.direction, place);
   const last = airStep(
     scaled.value,
     context.room ? state.densityKgPerM3 : noAir,
@@ -143,10 +140,9 @@ function correctedEnd(
   say: Speech,
   take: (step: ChainStep) => void,
 ): End {
-  const { pressureDropPa } = inlet;
+  const { pressureDropPa, state } = inlet;
   if (pressureDropPa <= 0)
     throw new OutOfRangeError('test pressure', 'At a test pressure of zero there is nothing to correct by.');
-  const state = inletState(inlet.air);
   const back =
     Math.sqrt(pressureDropPa / standardPa) *
     Math.sqrt(context.reference.densityKgPerM3 / state.densityKgPerM3);

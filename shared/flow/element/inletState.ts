@@ -83,3 +83,14 @@ export function elementState(air: BenchAir, place: Place): PlaceState {
     ? stateOf(air, shiftedPa(air, 1), true)
     : stateOf(air, air.room.pressureAbsPa, true);
 }
+
+/** Whether the element sits in the very air that enters the test piece: the room when drawing, the plenum when blowing.
+ * Formula: none.
+ * @param direction drawing or blowing @param place where the element sits: room, afterPort or plenum
+ * @returns true or false @throws nothing: both are closed lists
+ * Range: every direction and place. Source: flow-maths, section 1.
+ * @example isAtInlet('blowing', 'plenum') // true
+ */
+export function isAtInlet(direction: Direction, place: Place): boolean {
+  return place === (direction === 'drawing' ? 'room' : 'plenum');
+}
