@@ -200,6 +200,22 @@ export function meanFlow(curve: Pchip, weights: MeanWeights): number {
   return sum;
 }
 
+/** Share of a mean that hangs on the slopes near point i, with that point's value moved. A slope hangs on its neighbours
+ * only, so a window around the point is enough; the window's own cut ends are not true slopes and are left out. */
+function slopeShare(curve: Pchip, weights: MeanWeights, i: number, by: number): number {
+  const last = curve.xs.length - 1;
+  const from = Math.max(0, i - 3);
+  const to = Math.min(last, i + 3);
+  const ys = curve.ys.slice(from, to + 1);
+  ys[i - from] = (ys[i - from] ?? 0) + by;
+  const slopes = pchipSlopes(curve.xs.slice(from, to + 1), ys);
+  let sum = 0;
+  for (let k = from; k <= to; k++)
+    if (k === 0 || k === last || (k > from && k < to))
+      sum += (weights.slopeWeights[k] ?? 0) * (slopes[k - from] ?? 0);
+  return sum;
+}
+
 /** How much a mean moves with each flow of the curve: ∂mean/∂y_i, the slopes' share by central differences of 1e-6.
  * @param curve with the lifts the weights were made for @param weights from liftRangeWeights or camWeights
  * @returns one number a point of the curve (an added zero included), dimensionless; they sum with y_i to the mean
@@ -210,20 +226,8 @@ export function meanFlow(curve: Pchip, weights: MeanWeights): number {
 export function meanSensitivities(curve: Pchip, weights: MeanWeights): number[] {
   meanFlow(curve, weights);
   const step = 1e-6 * Math.max(...curve.ys.map(Math.abs), Number.MIN_VALUE * 1e9);
-  const last = curve.xs.length - 1;
   return curve.ys.map((_, i) => {
-    // a slope hangs on its neighbours only, so a window around the point is enough; its own cut ends are not true slopes
-    const from = Math.max(0, i - 3);
-    const xs = curve.xs.slice(from, i + 4);
-    const isTrue = (k: number) => k === 0 || k === last || (k > from && k < from + xs.length - 1);
-    const moved = (by: number) => {
-      const ys = curve.ys.slice(from, i + 4);
-      ys[i - from] = (ys[i - from] ?? 0) + by;
-      return pchipSlopes(xs, ys).reduce(
-        (sum, slope, k) => sum + (isTrue(from + k) ? (weights.slopeWeights[from + k] ?? 0) * slope : 0),
-        0,
-      );
-    };
-    return (weights.valueWeights[i] ?? 0) + (moved(step) - moved(-step)) / (2 * step);
+    const moved = slopeShare(curve, weights, i, step) - slopeShare(curve, weights, i, -step);
+    return (weights.valueWeights[i] ?? 0) + moved / (2 * step);
   });
 }

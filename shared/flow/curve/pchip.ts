@@ -23,31 +23,35 @@ function endSlope(h0: number, h1: number, secant0: number, secant1: number): num
 export function pchipSlopes(xs: readonly number[], ys: readonly number[]): number[] {
   if (xs.length < 2 || xs.length !== ys.length)
     throw new OutOfRangeError('curve', 'A curve needs two points or more, with a value each.');
-  const widths: number[] = [];
-  const secants: number[] = [];
-  xs.forEach((x, i) => {
-    finite(x, 'x');
-    const y = finite(ys[i] ?? Number.NaN, 'y');
-    if (i === 0) return;
-    const width = x - (xs[i - 1] ?? x);
-    if (!(width > 0)) throw new OutOfRangeError('curve', 'The x of a curve must rise.');
-    widths.push(width);
-    secants.push((y - (ys[i - 1] ?? y)) / width);
-  });
-  const width = (i: number) => widths[i] ?? 0;
-  const secant = (i: number) => secants[i] ?? 0;
   const last = xs.length - 1;
-  if (last === 1) return [secant(0), secant(0)];
-  return xs.map((_, i) => {
-    if (i === 0) return endSlope(width(0), width(1), secant(0), secant(1));
-    if (i === last) return endSlope(width(last - 1), width(last - 2), secant(last - 1), secant(last - 2));
-    const before = secant(i - 1);
-    const after = secant(i);
-    if (before * after <= 0) return 0;
-    const w1 = 2 * width(i) + width(i - 1);
-    const w2 = width(i) + 2 * width(i - 1);
-    return (w1 + w2) / (w1 / before + w2 / after);
-  });
+  const widths = new Array<number>(last).fill(0);
+  const secants = new Array<number>(last).fill(0);
+  // plain loops: the uncertainty of a figure asks for these slopes hundreds of times a session
+  for (let i = 0; i <= last; i++) {
+    finite(xs[i] ?? Number.NaN, 'x');
+    finite(ys[i] ?? Number.NaN, 'y');
+  }
+  for (let i = 0; i < last; i++) {
+    const width = (xs[i + 1] ?? 0) - (xs[i] ?? 0);
+    if (!(width > 0)) throw new OutOfRangeError('curve', 'The x of a curve must rise.');
+    widths[i] = width;
+    secants[i] = ((ys[i + 1] ?? 0) - (ys[i] ?? 0)) / width;
+  }
+  const slopes = new Array<number>(last + 1).fill(0);
+  if (last === 1) return slopes.fill(secants[0] ?? 0);
+  for (let i = 1; i < last; i++) {
+    const before = secants[i - 1] ?? 0;
+    const after = secants[i] ?? 0;
+    if (before * after <= 0) continue;
+    const [h1, h2] = [widths[i - 1] ?? 0, widths[i] ?? 0];
+    const w1 = 2 * h2 + h1;
+    const w2 = h2 + 2 * h1;
+    slopes[i] = (w1 + w2) / (w1 / before + w2 / after);
+  }
+  slopes[0] = endSlope(widths[0] ?? 0, widths[1] ?? 0, secants[0] ?? 0, secants[1] ?? 0);
+  const [end, before] = [last - 1, last - 2];
+  slopes[last] = endSlope(widths[end] ?? 0, widths[before] ?? 0, secants[end] ?? 0, secants[before] ?? 0);
+  return slopes;
 }
 
 /** Curve through points by pchipSlopes.

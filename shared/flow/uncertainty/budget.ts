@@ -6,7 +6,7 @@
  * Invariants: parts are independent of each other; contributions of one shared error add with their signs, contributions
  * of different errors add by their squares.
  */
-import { effectiveFreedom, expandedUncertainty } from '@/shared/flow/uncertainty/propagation';
+import { effectiveFreedom, expandedUncertainty, rootSumSquares } from '@/shared/flow/uncertainty/propagation';
 import { finite } from '@/shared/units/outOfRange';
 
 /** What shares one error: this reading alone, or every reading of the run, the bench, the calibration. */
@@ -78,9 +78,7 @@ export function budgetOf<Part extends Contribution>(
   notes: { isAbsoluteKnown?: boolean; cautions?: readonly string[] } = {},
 ): Budget<Part> {
   finite(flowM3PerS, 'flow');
-  const standardUncertaintyM3PerS = Math.hypot(
-    ...parts.map(({ contributionM3PerS }) => finite(contributionM3PerS, 'contribution')),
-  );
+  const standardUncertaintyM3PerS = rootSumSquares(parts.map(({ contributionM3PerS }) => contributionM3PerS));
   const degreesOfFreedom = effectiveFreedom(
     parts.map((part) => ({
       contribution: part.contributionM3PerS,

@@ -1,5 +1,5 @@
 import { type Budget, type Contribution, type PartName } from '@/shared/flow/uncertainty/budget';
-import { effectiveFreedom, expandedUncertainty } from '@/shared/flow/uncertainty/propagation';
+import { effectiveFreedom, expandedUncertainty, rootSumSquares } from '@/shared/flow/uncertainty/propagation';
 import { positive } from '@/shared/units/outOfRange';
 
 /** What two results have in common. Only where all of the bench is alike do its errors drop out. */
@@ -119,13 +119,13 @@ export function differenceOf(first: Budget, second: Budget, inCommon: InCommon):
         isShared: shared,
         degreesOfFreedom,
         contributionM3PerS: shared ? c2 - c1 : Math.hypot(c1, c2),
-        contributionRatio: shared ? onRatio[0] - onRatio[1] : Math.hypot(...onRatio),
+        contributionRatio: shared ? onRatio[0] - onRatio[1] : rootSumSquares(onRatio),
       },
     ];
   });
   const inFlow = parts.map((part) => ({ ...part, contribution: part.contributionM3PerS }));
   const inRatio = parts.map((part) => ({ ...part, contribution: part.contributionRatio }));
-  const uOf = (list: readonly { contribution: number }[]) => Math.hypot(...list.map((p) => p.contribution));
+  const uOf = (list: readonly { contribution: number }[]) => rootSumSquares(list.map((p) => p.contribution));
   const flow = expandedUncertainty(uOf(inFlow), effectiveFreedom(inFlow));
   const ratioFreedom = effectiveFreedom(inRatio);
   const ratio = expandedUncertainty(uOf(inRatio), ratioFreedom);

@@ -1,6 +1,7 @@
 import { type MeanWeights, meanFlow, meanSensitivities } from '@/shared/flow/curve/flowCurve';
 import { type Pchip } from '@/shared/flow/curve/pchip';
 import { type Budget, type Contribution, type PartName, budgetOf } from '@/shared/flow/uncertainty/budget';
+import { rootSumSquares } from '@/shared/flow/uncertainty/propagation';
 import { OutOfRangeError } from '@/shared/units/outOfRange';
 
 /** Joins one part of several flows: errors of single readings by squares, errors they share with their signs. */
@@ -9,7 +10,7 @@ function joined(parts: readonly { part: Contribution; weight: number }[]): Contr
   if (!first) return null;
   const shares = parts.map(({ part, weight }) => weight * part.contributionM3PerS);
   const contributionM3PerS =
-    first.sharedBy === 'reading' ? Math.hypot(...shares) : shares.reduce((sum, share) => sum + share, 0);
+    first.sharedBy === 'reading' ? rootSumSquares(shares) : shares.reduce((sum, share) => sum + share, 0);
   // one pooled spread stands behind every lift, so its freedom does not grow with the number of lifts
   const degreesOfFreedom = Math.min(...parts.map(({ part }) => part.degreesOfFreedom));
   return { name: first.name, sharedBy: first.sharedBy, degreesOfFreedom, contributionM3PerS };

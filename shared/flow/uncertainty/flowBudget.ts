@@ -127,7 +127,14 @@ export function flowBudget(input: FlowBudgetInput): Budget<BudgetPart> {
       input.repeat.degreesOfFreedom,
     ),
     part('setUp', 'run', 1, '1', zeroOrMore(setUp.ratio, 'set-up'), flow, setUp.degreesOfFreedom),
-    part('liftResolution', 'reading', input.liftM, 'm', resolutionUncertainty(input.liftStepM), slope),
+    part(
+      'liftResolution',
+      'reading',
+      finite(input.liftM, 'lift'),
+      'm',
+      resolutionUncertainty(input.liftStepM),
+      slope,
+    ),
     part('liftZero', 'run', 0, 'm', zeroOrMore(input.liftZeroM, 'lift zero'), slope),
     part('leak', 'run', input.leakM3PerS, 'm³/s', zeroOrMore(input.leakUncertaintyM3PerS, 'leak'), -1),
     part(

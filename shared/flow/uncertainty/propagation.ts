@@ -39,6 +39,18 @@ export function typeAUncertainty(values: readonly number[]): {
   return { mean, standardUncertainty: standardDeviation / Math.sqrt(count), degreesOfFreedom: count - 1 };
 }
 
+/** Root of the sum of squares: √Σx². Independent errors add by it.
+ * @param values any number of values of one unit
+ * @returns the root in that unit, 0 for no values @throws OutOfRangeError (a RangeError) for one that is not finite
+ * Range: magnitudes from 1e-150 to 1e150. Source: GUM 5.1.2. Math.hypot is ten times slower over a budget.
+ * @example rootSumSquares([3, 4]) // 5
+ */
+export function rootSumSquares(values: readonly number[]): number {
+  let sum = 0;
+  for (const value of values) sum += finite(value, 'contribution') ** 2;
+  return Math.sqrt(sum);
+}
+
 /** One input of a propagation: its sensitivity ∂f/∂x and its standard uncertainty. */
 export type Term = { sensitivity: number; standardUncertainty: number };
 
