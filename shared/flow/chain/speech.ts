@@ -11,6 +11,9 @@ export type Speech = {
   number: (value: number, decimals: number) => string;
 };
 
+/** Says nothing: for figures whose sentences nobody reads, as the leak's own way through the chain or a whole session's. */
+export const silence: Speech = { flow: () => '', pressure: () => '', density: () => '', number: () => '' };
+
 /** Ways to say figures in the shop's units: number = value / factor, with the decimals that suit the size.
  * @param shop.flowUnit unit of flow @param shop.pressureUnit unit of pressure @param shop.decimalMark point or comma
  * @param shop.densityKgPerM3 density a mass flow is reckoned with, kg/m³

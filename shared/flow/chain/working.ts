@@ -3,7 +3,7 @@ import { OutOfRangeError, positive } from '@/shared/units/outOfRange';
 import type { ChainContext, ChainReading, ChainStep, Working } from './chainTypes';
 import { airStep, leakStep, testPressureStep } from './flowSteps';
 import { readKeyedPressurePa } from './readKeyed';
-import { type Speech, speech } from './speech';
+import { type Speech, silence, speech } from './speech';
 import { type Inlet, toInlet } from './toInlet';
 
 /** Thrown inside the chain by a step that cannot go on; `working` turns it into its last step. */
@@ -12,11 +12,11 @@ class Stopped extends Error {}
 const noAir = 'No air was recorded: not brought to the reference air. The uncertainty grows.';
 
 /** What the leak step takes: the leak brought through steps 1 to 4, or why none is subtracted. */
-function leakOf(context: ChainContext, say: Speech): Parameters<typeof leakStep>[2] {
+function leakOf(context: ChainContext): Parameters<typeof leakStep>[2] {
   const { leak, bench } = context;
   if (!leak) return null;
   if (!bench.isLeakBeforeElement) return 'The leak does not pass the element: it is not subtracted.';
-  const { flowM3PerS, pressureDropPa } = toInlet(leak.reading, context, say, (step) => {
+  const { flowM3PerS, pressureDropPa } = toInlet(leak.reading, context, silence, (step) => {
     if (step.state === 'stopped') throw new OutOfRangeError('leak', `The leak: ${step.sentence}`);
   });
   const exponent = bench.leakExponent;
@@ -38,7 +38,27 @@ function stopAtStopped(step: ChainStep): void {
  * @example working({ flow: { text: '100', unit: 'cfm' }, pressure: { text: '0', unit: 'inH2O' } }, { bench: { element: 'vane', place: 'room', scaledDensityKgPerM3: null, plate: null, leakExponent: 0.5, isLeakBeforeElement: true }, direction: 'drawing', range: null, zero: null, calibration: null, leak: null, room: null, plenum: null, standardPressure: { text: '28', unit: 'inH2O' }, reference: { label: 'dry', densityKgPerM3: 1.2, air: referenceAir('dry20C') }, show: { flowUnit: 'cfm', pressureUnit: 'inH2O', decimalMark: '.' } }) // { flowM3PerS: null }
  */
 export function working(reading: ChainReading, context: ChainContext): Working {
-  const say = speech({ ...context.show, densityKgPerM3: context.reference.densityKgPerM3 });
+  return chained(
+    reading,
+    context,
+    speech({ ...context.show, densityKgPerM3: context.reference.densityKgPerM3 }),
+  );
+}
+
+/** What `working` comes to, without its sentences: for curves, figures and sessions, where hundreds are wanted at once.
+ * Q_ref = ṁ/√(ρ0 ρref)·√(p_standard/p_test).
+ * @param reading flow and test pressure as keyed, text and unit @param context as for `working`
+ * @returns corrected and unscaled flow, m³/s, null when the chain cannot go on, and the notes
+ * @throws RangeError when what was keyed is not exactly one number
+ * Range: that of each step. Source: flow-maths, section 1.
+ * @example correctedFlow({ flow: { text: '100', unit: 'L/s' }, pressure: { text: '2.5', unit: 'kPa' } }, { bench: { element: 'vane', place: 'room', scaledDensityKgPerM3: null, plate: null, leakExponent: 0.5, isLeakBeforeElement: true }, direction: 'drawing', range: null, zero: null, calibration: null, leak: null, room: null, plenum: null, standardPressure: { text: '10', unit: 'kPa' }, reference: { label: 'dry', densityKgPerM3: 1.2, air: referenceAir('dry20C') }, show: { flowUnit: 'L/s', pressureUnit: 'kPa', decimalMark: '.' } }) // { flowM3PerS: 0.2000, isAirAssumed: true }
+ */
+export function correctedFlow(reading: ChainReading, context: ChainContext): Omit<Working, 'steps'> {
+  const { flowM3PerS, unscaled, isAirAssumed, notes } = chained(reading, context, silence);
+  return { flowM3PerS, unscaled, isAirAssumed, notes };
+}
+
+function chained(reading: ChainReading, context: ChainContext, say: Speech): Working {
   const steps: ChainStep[] = [];
   const take = (step: ChainStep) => {
     steps.push(step);
@@ -106,7 +126,7 @@ function measuredEnd(
   const { pressureDropPa, state } = inlet;
   if (pressureDropPa <= 0)
     throw new OutOfRangeError('test pressure', 'At a test pressure of zero there is nothing to correct by.');
-  const afterLeak = leakStep(inlet.flowM3PerS, pressureDropPa, leakOf(context, say), say);
+  const afterLeak = leakStep(inlet.flowM3PerS, pressureDropPa, leakOf(context), say);
   take(afterLeak);
   const scaled = testPressureStep(afterLeak.value, pressureDropPa, standardPa, say);
   take(scaled);
@@ -146,7 +166,7 @@ function correctedEnd(
   const back =
     Math.sqrt(pressureDropPa / standardPa) *
     Math.sqrt(context.reference.densityKgPerM3 / state.densityKgPerM3);
-  const leak = leakOf(context, say);
+  const leak = leakOf(context);
   const asShown =
     leak === null || typeof leak === 'string'
       ? leak

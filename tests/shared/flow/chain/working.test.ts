@@ -4,7 +4,7 @@ import { airStep, elementStep, leakStep, testPressureStep } from '@/shared/flow/
 import { readKeyedFlow, readKeyedPressurePa, readKeyedRest } from '@/shared/flow/chain/readKeyed';
 import { calibrationStep, scaleStep, zeroStep } from '@/shared/flow/chain/readingSteps';
 import { speech } from '@/shared/flow/chain/speech';
-import { working } from '@/shared/flow/chain/working';
+import { correctedFlow, working } from '@/shared/flow/chain/working';
 import { dischargeCoefficient } from '@/shared/flow/ideal/coefficients';
 import { wallPlateFlow } from '@/shared/flow/orifice/orificeFlow';
 import type { FlowUnit, PressureUnit } from '@/shared/schema/primitives';
@@ -300,6 +300,21 @@ it('drawing and blowing agree when plenum and room are alike', () => {
       near(blown.flowM3PerS! / drawn.flowM3PerS!, 1, 1e-12);
       const cd = (got: ReturnType<typeof working>) => dischargeCoefficient(got.unscaled!, 1e-3);
       near(cd(blown) / cd(drawn), 1, 1e-12);
+    }),
+  );
+});
+
+it('without its sentences the chain comes to the same', () => {
+  fc.assert(
+    fc.property(anyReading, fc.boolean(), ({ flow, pressure }, isBlown) => {
+      const context = chainContext({
+        direction: isBlown ? 'blowing' : 'drawing',
+        leak: { reading: chainReading('2.4', '28'), settingRatio: 1 },
+        room: isBlown ? chainContext().room : null,
+      });
+      const { steps, ...rest } = working(chainReading(flow, pressure), context);
+      expect(steps).toHaveLength(9);
+      expect(correctedFlow(chainReading(flow, pressure), context)).toEqual(rest);
     }),
   );
 });
