@@ -110,7 +110,7 @@ export function carriedHumidityRatio(
   place: { pressureAbsPa: number; temperatureK: number },
 ): number {
   const here = checked(room);
-  checked({ ...place, humidityRatio: 0 });
+  checked({ pressureAbsPa: place.pressureAbsPa, temperatureK: place.temperatureK, humidityRatio: 0 });
   const from = saturated(here.pressureAbsPa, here.temperatureK);
   const there = saturated(place.pressureAbsPa, place.temperatureK);
   const vapourPa = here.humidityRatio * from.enhancementRatio * from.saturationPa;

@@ -1,5 +1,9 @@
-import { toReferenceAirM3PerS } from '@/shared/flow/element/elementFlow';
-import { type ElementReading, elementMass, inletFlowM3PerS } from '@/shared/flow/element/elementFlow';
+import {
+  type ElementReading,
+  elementMass,
+  inletFlowM3PerS,
+  toReferenceAirM3PerS,
+} from '@/shared/flow/element/elementFlow';
 import type { PlaceState } from '@/shared/flow/element/inletState';
 import { leakAtM3PerS } from '@/shared/flow/element/leak';
 import { rootToStandardPressure } from '@/shared/flow/correctReading';
@@ -38,7 +42,8 @@ export function elementStep(
     unit: 'm3/s',
     formula: elementFormula[reading.element],
     sentence: `Air ${say.density(at.densityKgPerM3)} at the element, ${say.density(inlet.densityKgPerM3)} at the inlet of the port: ${say.flow(value)} there.`,
-    notes: [...new Set([...inlet.notes, ...at.notes, ...limits])],
+    notes:
+      at === inlet ? [...inlet.notes, ...limits] : [...new Set([...inlet.notes, ...at.notes, ...limits])],
   };
 }
 
@@ -58,20 +63,17 @@ export function leakStep(
   say: Speech,
 ): ChainStep {
   const flow = zeroOrMore(flowM3PerS, 'flow');
-  const base = { name: 'leak', unit: 'm3/s', formula: 'Q = Q0 − leak · (p/p_leak)ⁿ' } as const;
+  const formula = 'Q = Q0 − leak · (p/p_leak)ⁿ';
   if (leak === null || typeof leak === 'string') {
     const sentence = leak ?? 'No leak was measured: none is subtracted.';
-    return { ...base, state: 'skipped', value: flow, sentence, notes: leak === null ? [sentence] : [] };
+    const said = leak === null ? [sentence] : [];
+    return { name: 'leak', state: 'skipped', value: flow, unit: 'm3/s', formula, sentence, notes: said };
   }
   const atPressure = leakAtM3PerS(leak, pressureDropPa);
   const value = Math.max(0, flow - atPressure);
-  return {
-    ...base,
-    state: 'done',
-    value,
-    sentence: `Less the leak, ${say.flow(atPressure)} at ${say.pressure(pressureDropPa)}: ${say.flow(value)}.`,
-    notes: atPressure > flow ? ['The leak is larger than the flow.'] : [],
-  };
+  const sentence = `Less the leak, ${say.flow(atPressure)} at ${say.pressure(pressureDropPa)}: ${say.flow(value)}.`;
+  const notes = atPressure > flow ? ['The leak is larger than the flow.'] : [];
+  return { name: 'leak', state: 'done', value, unit: 'm3/s', formula, sentence, notes };
 }
 
 /** Step 6, test pressure: Q = Q_test·√(p_standard/p_test).
@@ -117,25 +119,17 @@ export function airStep(
   cancels: boolean,
   say: Speech,
 ): ChainStep {
-  const base = { name: 'air', unit: 'm3/s', formula: 'Q = Q · √(ρ0/ρref)' } as const;
-  if (typeof inletDensityKgPerM3 === 'string')
-    return {
-      ...base,
-      state: 'skipped',
-      value: zeroOrMore(flowM3PerS, 'flow'),
-      sentence: inletDensityKgPerM3,
-      notes: [inletDensityKgPerM3],
-    };
+  const formula = 'Q = Q · √(ρ0/ρref)';
+  if (typeof inletDensityKgPerM3 === 'string') {
+    const sentence = inletDensityKgPerM3;
+    const flow = zeroOrMore(flowM3PerS, 'flow');
+    return { name: 'air', state: 'skipped', value: flow, unit: 'm3/s', formula, sentence, notes: [sentence] };
+  }
   const value = toReferenceAirM3PerS(flowM3PerS, inletDensityKgPerM3, reference.densityKgPerM3);
   const factor = say.number(Math.sqrt(inletDensityKgPerM3 / reference.densityKgPerM3), 4);
   const cancelled = cancels
     ? ' The element sits in the same air as the port, so the room’s air cancels.'
     : '';
-  return {
-    ...base,
-    state: 'done',
-    value,
-    sentence: `To ${reference.label} (${say.density(reference.densityKgPerM3)}) from ${say.density(inletDensityKgPerM3)}, × ${factor}: ${say.flow(value)}.${cancelled}`,
-    notes: [],
-  };
+  const sentence = `To ${reference.label} (${say.density(reference.densityKgPerM3)}) from ${say.density(inletDensityKgPerM3)}, × ${factor}: ${say.flow(value)}.${cancelled}`;
+  return { name: 'air', state: 'done', value, unit: 'm3/s', formula, sentence, notes: [] };
 }

@@ -40,7 +40,8 @@ export function toInlet(
   take({
     name: 'reading',
     state: 'done',
-    ...keyed,
+    value: keyed.value,
+    unit: keyed.unit,
     formula: '',
     sentence: `Keyed: ${reading.flow.text} ${reading.flow.unit} at ${reading.pressure.text} ${reading.pressure.unit}.`,
     notes: [],
@@ -63,7 +64,7 @@ export function toInlet(
     pressureDropPa: pressure.value,
   };
 
-  const scaled = scaleStep({ unit: zeroed.unit, value: zeroed.value }, context.range, say);
+  const scaled = scaleStep(zeroed, context.range, say);
   take(scaled);
   if (scaled.unit === 'Pa') {
     // a plate read as a pressure drop is a flow only after the element: its calibration is fitted on that
@@ -111,9 +112,9 @@ function elementOf(
     };
   const at = isAtInlet(air.direction, place) ? inlet : elementState(air, place);
   const step = elementStep(reading, at, inlet, say);
-  const notes = [...step.notes];
+  const notes: string[] = [];
   if (!context.room) notes.push(`No air was recorded: reckoned with ${context.reference.label}.`);
   if (element !== 'vane' && element !== 'orificeDrop' && scaledDensityKgPerM3 === null)
     notes.push('The bench does not say what air its element is scaled for: the reference air is taken.');
-  return { ...step, notes };
+  return notes.length === 0 ? step : { ...step, notes: [...step.notes, ...notes] };
 }

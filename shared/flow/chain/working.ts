@@ -139,7 +139,7 @@ function measuredEnd(
     cancels,
     say,
   );
-  take({ ...last, notes: [...last.notes, ...state.notes] });
+  take(state.notes.length === 0 ? last : { ...last, notes: [...last.notes, ...state.notes] });
   return {
     flowM3PerS: last.value,
     unscaled: {

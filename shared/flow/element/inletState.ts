@@ -29,17 +29,16 @@ const noTemperature = 'The plenum’s temperature was not noted: the room’s is
 function stateOf(air: BenchAir, pressureAbsPa: number, isPlenumAir: boolean): PlaceState {
   const notes: string[] = [];
   const isRoom = pressureAbsPa === air.room.pressureAbsPa && !isPlenumAir;
-  let state = air.room;
+  let { temperatureK, humidityRatio } = air.room;
   if (!isRoom) {
     if (isPlenumAir && air.plenum === null) notes.push(noTemperature);
-    const temperatureK = isPlenumAir && air.plenum ? air.plenum.temperatureK : air.room.temperatureK;
-    const measured = isPlenumAir && air.plenum ? air.plenum.humidityRatio : null;
-    const place = { pressureAbsPa, temperatureK };
-    state = { ...place, humidityRatio: measured ?? carriedHumidityRatio(air.room, place) };
+    const plenum = isPlenumAir ? air.plenum : null;
+    temperatureK = plenum?.temperatureK ?? air.room.temperatureK;
+    humidityRatio = plenum?.humidityRatio ?? carriedHumidityRatio(air.room, { pressureAbsPa, temperatureK });
   }
-  const { densityKgPerM3, rangeNote } = moistAir(state);
+  const { densityKgPerM3, rangeNote } = moistAir({ pressureAbsPa, temperatureK, humidityRatio });
   if (rangeNote) notes.push(rangeNote);
-  return { ...state, densityKgPerM3, notes };
+  return { pressureAbsPa, temperatureK, humidityRatio, densityKgPerM3, notes };
 }
 
 function shiftedPa(air: BenchAir, sign: 1 | -1): number {
