@@ -4,7 +4,7 @@ import { between, zeroOrMore } from '@/shared/units/outOfRange';
 
 /** Standard uncertainty of the density as a share, when no air was recorded: rooms from 5 to 35 °C and weather from 97 to
  * 104 kPa at one altitude spread about this much. Practice, no source. */
-export const unrecordedAirRatio = 0.04;
+const unrecordedAirRatio = 0.04;
 
 /** Standard uncertainty of the air's density as a share of it: law of propagation through the density equation.
  * @param state `pressureAbsPa` (Pa), `temperatureK` (K), `humidityRatio` (0..1)
