@@ -2,10 +2,6 @@ import { airDensityKgPerM3 } from '@/shared/flow/air/moistAir';
 import { propagate, sensitivitiesOf } from '@/shared/flow/uncertainty/propagation';
 import { between, zeroOrMore } from '@/shared/units/outOfRange';
 
-/** Standard uncertainty of the density as a share, when no air was recorded: rooms from 5 to 35 °C and weather from 97 to
- * 104 kPa at one altitude spread about this much. Practice, no source. */
-const unrecordedAirRatio = 0.04;
-
 /** Standard uncertainty of the air's density as a share of it: law of propagation through the density equation.
  * @param state `pressureAbsPa` (Pa), `temperatureK` (K), `humidityRatio` (0..1)
  * @param uncertainty standard uncertainties of the three, Pa, K, share of saturation; 0 or above
