@@ -3,12 +3,11 @@ import { useEffect } from 'react';
 import { View, useWindowDimensions } from 'react-native';
 import { BenchFailed, BenchOpening, BenchOtherTab } from '@/components/bench/BenchClosed';
 import { PinGate } from '@/components/bench/PinGate';
-import { copyName, saveFile } from '@/components/bench/saveFile';
 import { isNarrowFor, statusFacts } from '@/components/bench/statusFacts';
 import { StatusStrip } from '@/components/ui/StatusStrip';
 import { ThemeProvider, useTheme } from '@/components/ui/ThemeProvider';
 import { useBenchStore } from '@/stores/bench/benchStore';
-import { keepCopyAsFile } from '@/stores/bench/keepCopy';
+import { downloadCopy } from '@/stores/bench/downloadCopy';
 import { usePreferencesStore } from '@/stores/preferences/preferencesStore';
 import { useRoster } from '@/stores/queries/benchQueries';
 
@@ -39,7 +38,7 @@ function BenchDoor() {
       <BenchFailed
         sentence={failure ?? 'The database of this browser could not be opened.'}
         onTryAgain={() => window.location.reload()}
-        onKeepCopy={keepCopy}
+        onKeepCopy={downloadCopy}
       />
     );
   if (pathname === '/bench/enrol') return <Slot />;
@@ -74,13 +73,4 @@ function BenchInside({ personName }: { personName: string }) {
       <Slot />
     </View>
   );
-}
-
-async function keepCopy(): Promise<boolean> {
-  try {
-    saveFile(await keepCopyAsFile(), copyName(new Date()));
-    return true;
-  } catch {
-    return false;
-  }
 }

@@ -1,10 +1,9 @@
 import { useRouter } from 'expo-router';
 import { UnsentList } from '@/components/bench/UnsentList';
-import { copyName, saveFile } from '@/components/bench/saveFile';
 import { Screen } from '@/components/ui/Screen';
 import { ErrorState, Progress } from '@/components/ui/States';
 import { useBenchStore } from '@/stores/bench/benchStore';
-import { keepCopyAsFile } from '@/stores/bench/keepCopy';
+import { downloadCopy } from '@/stores/bench/downloadCopy';
 import { useUnsent } from '@/stores/queries/benchQueries';
 
 export default function UnsentRoute() {
@@ -29,19 +28,10 @@ export default function UnsentRoute() {
           sync={sync}
           lines={lines}
           onSendNow={syncNow}
-          onKeepCopy={keepCopy}
+          onKeepCopy={downloadCopy}
           onEnrolAgain={() => router.push('/bench/enrol')}
         />
       ) : null}
     </Screen>
   );
-}
-
-async function keepCopy(): Promise<boolean> {
-  try {
-    saveFile(await keepCopyAsFile(), copyName(new Date()));
-    return true;
-  } catch {
-    return false;
-  }
 }

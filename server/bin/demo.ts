@@ -24,8 +24,8 @@ const db = connectServerDb(url, (error) => log.warn({ err: error }, 'lost a conn
 
 async function welcome(): Promise<string[]> {
   const ctx: Ctx = { db, log, clock: () => new Date(), newId: () => v7() };
-  const [shops] = await lookUp<{ any: boolean }>(db, 'select has_any_shop() as any', []);
-  if (!shops?.any) await makeDemoShop(ctx, Date.now());
+  const [shops] = await lookUp<{ made: boolean }>(db, 'select has_any_shop() as made', []);
+  if (!shops?.made) await makeDemoShop(ctx, Date.now());
   const [found] = await lookUp<{ shop_id: string; person_id: string }>(
     db,
     'select shop_id, person_id from find_people_by_mail($1)',

@@ -51,7 +51,7 @@ export type FlowBudgetInput = {
   /** standard uncertainty of the lift's zero */
   liftZeroM: number;
   densityKgPerM3: number;
-  /** standard uncertainty of the density as a share; `unrecordedAirRatio` when no air was recorded */
+  /** standard uncertainty of the density as a share; large when no air was recorded */
   airRatio: number;
   /** how the flow goes with the density: 0.5 vane, −0.5 hot-wire, 0 an orifice in the same air as the port */
   airExponent: number;
