@@ -10,6 +10,7 @@ const withCluster = {
   globalSetup: '<rootDir>/tests/globalSetup.mjs',
   globalTeardown: '<rootDir>/tests/globalTeardown.mjs',
 };
+const seeded = { setupFiles: ['<rootDir>/tests/support/seed.ts'] };
 const inNode = {
   testEnvironment: 'node',
   moduleNameMapper,
@@ -31,10 +32,16 @@ const inNode = {
  */
 const config: Config = {
   projects: [
-    { displayName: 'node', ...inNode, testMatch: ['<rootDir>/tests/{shared,stores,device}/**/*.test.ts'] },
+    {
+      displayName: 'node',
+      ...inNode,
+      ...seeded,
+      testMatch: ['<rootDir>/tests/{shared,stores,device}/**/*.test.ts'],
+    },
     {
       displayName: 'server',
       ...inNode,
+      ...seeded,
       ...withCluster,
       testMatch: ['<rootDir>/tests/{server,db,sim}/**/*.test.ts'],
     },

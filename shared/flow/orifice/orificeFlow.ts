@@ -30,6 +30,7 @@ export type PlateFlow = {
 };
 
 const steps = 200;
+const smallestKgPerS = 1e-100;
 
 /** Solves for the mass flow: the coefficient depends on the Reynolds number, that on the flow. */
 function iterate(
@@ -38,6 +39,8 @@ function iterate(
   start: number,
   next: (reynolds: number) => number,
 ): { massKgPerS: number; reynolds: number } {
+  // below this a square or a quotient of it loses its digits, and 0 / 0 would be no number
+  if (!(start > smallestKgPerS)) throw tooSmall();
   let massKgPerS = start;
   for (let i = 0; i < steps; i += 1) {
     const reynolds = (4 * massKgPerS) / (Math.PI * diameterM * viscosity);
@@ -45,8 +48,11 @@ function iterate(
     if (Math.abs(better - massKgPerS) <= 1e-14 * better) return { massKgPerS: better, reynolds };
     massKgPerS = better;
   }
-  throw new OutOfRangeError('flow', 'The flow through this plate is too small to be computed.');
+  throw tooSmall();
 }
+
+const tooSmall = () =>
+  new OutOfRangeError('flow', 'The flow through this plate is too small to be computed.');
 
 function positiveState(state: PlateState): PlateState {
   positive(state.densityKgPerM3, 'density of the air');

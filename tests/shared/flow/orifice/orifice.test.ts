@@ -143,6 +143,13 @@ it.each([0, -1, Number.NaN, Number.POSITIVE_INFINITY])('refuses %p as bore, duct
   expect(() => wallPlateFlow({ boreM: 0.05, coefficient: x }, at(6))).toThrow(OutOfRangeError);
 });
 
+it('refuses a flow too small for its digits instead of answering with no number', () => {
+  const state = { ...at(6), pressureDropPa: 4.741266989196221e-277 };
+  expect(() => wallPlateFlow({ boreM: 1.71567553863286e-93, coefficient: null }, state)).toThrow(
+    OutOfRangeError,
+  );
+});
+
 it('never answers with no number, however odd the plate and the drop', () => {
   const odd = fc.double({ min: -1e9, max: 1e9 });
   const oddOrSmall = fc.oneof(odd, fc.double({ min: 0, max: 0.2 }), fc.double({ min: 0, max: 1e-9 }));
