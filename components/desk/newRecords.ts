@@ -1,6 +1,7 @@
 import { v7 } from 'uuid';
 import type { DeskChange } from '@/shared/schema/api';
 import type { Customer, Head, PortDimension, Stage } from '@/shared/schema/records';
+import { noDimensions } from '@/shared/session/noDimensions';
 
 function create(table: string, rid: string, set: DeskChange['set']): DeskChange {
   return { id: v7(), kind: 'create', table, rid, base: {}, set };
@@ -49,21 +50,9 @@ export function newValve(rid: string, stageId: string, side: 'intake' | 'exhaust
   const dimension: PortDimension = {
     stageId,
     side,
-    port: null,
+    ...noDimensions,
     valveText: text,
     valveUnit: 'mm',
-    seatInnerText: null,
-    seatInnerUnit: null,
-    stemText: null,
-    stemUnit: null,
-    throatText: null,
-    throatUnit: null,
-    seatAngleText: null,
-    seatAngleUnit: null,
-    smallestSectionText: null,
-    smallestSectionUnit: null,
-    portVolumeText: null,
-    portVolumeUnit: null,
   };
   return create('portDimensions', rid, dimension);
 }

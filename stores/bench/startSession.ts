@@ -11,6 +11,7 @@ import {
   type Session,
   type Stage,
 } from '@/shared/schema/records';
+import { noDimensions } from '@/shared/session/noDimensions';
 import { sessionSettings } from '@/shared/session/startSession';
 import type { DeviceTx } from '@/db/device/deviceDb';
 import { getFact, setFact } from '@/db/device/meta';
@@ -95,24 +96,6 @@ export function startSession(input: StartSessionInput): Promise<string> {
     return sessionId;
   });
 }
-
-const noDimensions: Omit<PortDimension, 'stageId' | 'side'> = {
-  port: null,
-  valveText: null,
-  valveUnit: null,
-  seatInnerText: null,
-  seatInnerUnit: null,
-  stemText: null,
-  stemUnit: null,
-  throatText: null,
-  throatUnit: null,
-  seatAngleText: null,
-  seatAngleUnit: null,
-  smallestSectionText: null,
-  smallestSectionUnit: null,
-  portVolumeText: null,
-  portVolumeUnit: null,
-};
 
 function addCustomer(drafts: Draft[], name: string): string {
   const rid = v7();

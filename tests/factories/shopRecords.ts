@@ -1,5 +1,6 @@
 import { v7 } from 'uuid';
 import type { Bench, Customer, Head, PortDimension, Run, Rung, Stage } from '@/shared/schema/records';
+import { noDimensions } from '@/shared/session/noDimensions';
 import { newRun } from '@/shared/session/startSession';
 import type { DeskChange } from '@/shared/schema/api';
 import { readingFields, sessionFields } from './records';
@@ -34,21 +35,9 @@ export const stageFields = (word: string, headId: string): Stage => ({
 export const portDimensionFields = (stageId: string): PortDimension => ({
   stageId,
   side: 'intake',
-  port: null,
+  ...noDimensions,
   valveText: '40',
   valveUnit: 'mm',
-  seatInnerText: null,
-  seatInnerUnit: null,
-  stemText: null,
-  stemUnit: null,
-  throatText: null,
-  throatUnit: null,
-  seatAngleText: null,
-  seatAngleUnit: null,
-  smallestSectionText: null,
-  smallestSectionUnit: null,
-  portVolumeText: null,
-  portVolumeUnit: null,
 });
 
 export const benchFields = (word: string): Bench => ({
